@@ -1,0 +1,30 @@
+import { defineConfig } from '#q-app/wrappers';
+
+const api = { target: process.env.TAREWELL_DEV_API ?? 'http://127.0.0.1:4681' };
+
+export default defineConfig(() => ({
+  boot: ['theme', 'problems', 'session', 'live'],
+  css: ['app.scss'],
+  framework: {
+    iconSet: 'svg-mdi-v7',
+    plugins: ['Dark', 'Dialog', 'Notify'],
+  },
+  build: {
+    target: { browser: ['es2022', 'firefox115', 'chrome115', 'safari16'], node: 'node20' },
+    vueRouterMode: 'history',
+    vueOptionsAPI: false,
+    distDir: 'dist/spa',
+    typescript: { strict: true, vueShim: false },
+  },
+  devServer: {
+    host: '127.0.0.1',
+    port: Number(process.env.TAREWELL_DEV_PORT ?? 4682),
+    open: false,
+    proxy: {
+      '/api': api,
+      '/outbox': api,
+      '/healthz': api,
+      '/socket.io': { ...api, ws: true },
+    },
+  },
+}));

@@ -1,0 +1,40 @@
+import type { RouteLocationNormalized, RouteLocationRaw } from 'vue-router';
+
+type Visitor = {
+  signedIn: boolean;
+  firstRun: boolean;
+  homeClub: { clubSlug: string } | null;
+  findMembership: (slug: string) => unknown;
+};
+
+/** Where a visitor who asks for `/` belongs. */
+export function homeFor(visitor: Visitor): string {
+  if (visitor.firstRun) return '/welcome';
+  if (!visitor.signedIn) return '/sign-in';
+  return visitor.homeClub ? `/c/${visitor.homeClub.clubSlug}/buys` : '/clubs/new';
+}
+
+/** Only a path of this site is followed after sign-in, never another site's address. */
+export const readNext = (next: unknown): string | null =>
+  typeof next === 'string' && /^\/(?![/\\])/.test(next) ? next : null;
+
+/** Lets a visitor through, or says where to go instead. */
+export function decide(to: RouteLocationNormalized, visitor: Visitor): true | RouteLocationRaw {
+  if (to.path === '/') return homeFor(visitor);
+  if (to.meta.needs === 'session' && !visitor.signedIn) {
+    return { path: '/sign-in', query: { next: to.fullPath } };
+  }
+  if (to.meta.needs === 'guest' && visitor.signedIn) {
+    return readNext(to.query.next) ?? homeFor(visitor);
+  }
+  const { club } = to.params;
+  if (to.meta.needs === 'session' && typeof club === 'string' && !visitor.findMembership(club)) {
+    return {
+      name: 'not-found',
+      params: { path: to.path.slice(1).split('/') },
+      query: to.query,
+      hash: to.hash,
+    };
+  }
+  return true;
+}
