@@ -1,0 +1,43 @@
+export { apportion } from './domain/shares/apportion.ts';
+export { shareOut } from './domain/shares/shareOut.ts';
+export { explainStep } from './domain/shares/explainStep.ts';
+export { compareIds, compareTurns, sortPledges } from './domain/shares/pledgeOrder.ts';
+export type {
+  ChargeBasis,
+  ChargeShare,
+  LineShare,
+  MemberShare,
+  ShareCharge,
+  ShareLine,
+  SharePledge,
+  ShareRequest,
+  ShareSheet,
+  ShareStep,
+  ShelfShare,
+} from './domain/shares/shareTypes.ts';
+
+export {
+  cashStepMinor,
+  currencyCodes,
+  currencyExponent,
+  isCurrency,
+  roundToCash,
+} from './domain/money/currencies.ts';
+export { formatMoney, minorToDecimal } from './domain/money/formatMoney.ts';
+export { parseMoney, type MoneyProblem, type ParsedMoney } from './domain/money/parseMoney.ts';
+export type { Minor } from './domain/money/minor.ts';
+
+export {
+  ceilToStep,
+  floorToStep,
+  mgPerGram,
+  reserveMg,
+  type Milligrams,
+} from './domain/mass/milligrams.ts';
+export {
+  parseMass,
+  type MassProblem,
+  type MassUnit,
+  type ParsedMass,
+} from './domain/mass/parseMass.ts';
+export { formatMass, type MassDisplay } from './domain/mass/formatMass.ts';
