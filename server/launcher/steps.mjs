@@ -1,14 +1,16 @@
+import { isEnding } from './command.mjs';
+
 /** Prints one line. */
 export function say(line) {
-  process.stdout.write(`${line}\n`)
+  process.stdout.write(`${line}\n`);
 }
 
 /** @returns a duration as people read it, such as `0.4 s` or `1 min 12 s` */
 export function formatDuration(milliseconds) {
-  const seconds = milliseconds / 1000
-  if (seconds < 60) return `${seconds.toFixed(1)} s`
-  const whole = Math.round(seconds)
-  return `${Math.floor(whole / 60)} min ${whole % 60} s`
+  const seconds = milliseconds / 1000;
+  if (seconds < 60) return `${seconds.toFixed(1)} s`;
+  const whole = Math.round(seconds);
+  return `${Math.floor(whole / 60)} min ${whole % 60} s`;
 }
 
 /**
@@ -16,15 +18,17 @@ export function formatDuration(milliseconds) {
  * @param work may return a string that replaces "done" in the line
  */
 export async function step(what, work) {
-  const begun = performance.now()
-  process.stdout.write(`${what} ... `)
+  // While the command is being stopped, nothing new begins.
+  if (isEnding()) await new Promise(() => {});
+  const begun = performance.now();
+  process.stdout.write(`${what} ... `);
   try {
-    const result = await work()
-    const outcome = typeof result === 'string' ? result : 'done'
-    say(`${outcome} (${formatDuration(performance.now() - begun)})`)
-    return result
+    const result = await work();
+    const outcome = typeof result === 'string' ? result : 'done';
+    say(`${outcome} (${formatDuration(performance.now() - begun)})`);
+    return result;
   } catch (error) {
-    say(`failed after ${formatDuration(performance.now() - begun)}`)
-    throw error
+    say(`failed after ${formatDuration(performance.now() - begun)}`);
+    throw error;
   }
 }
