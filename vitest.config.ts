@@ -22,6 +22,7 @@ export default defineConfig({
           environment: 'node',
           include: ['tests/server/**/*.test.ts'],
           globalSetup: ['tests/support/globalSetup.ts'],
+          setupFiles: ['tests/support/serverSetup.ts'],
           testTimeout: 30_000,
           hookTimeout: 60_000,
         },

@@ -1,0 +1,26 @@
+import { Router, type RequestHandler } from 'express';
+import multer from 'multer';
+import { action } from '../middlewares/action.ts';
+import { noSuchRoute } from '../middlewares/problem.ts';
+import type { RouteDef } from '../middlewares/route.ts';
+import { sessionRoutes } from './session.ts';
+
+/** Every route of the API; OpenAPI and the refusal tests read this list. */
+export const allRoutes: readonly RouteDef[] = [...sessionRoutes];
+
+const upload = multer({
+  storage: multer.memoryStorage(),
+  limits: { fileSize: 10 * 1024 * 1024, files: 1, fields: 20 },
+}).single('file');
+
+/** Router of /api/v1. */
+export function apiRouter(): Router {
+  const router = Router();
+  for (const route of allRoutes) {
+    const handlers: RequestHandler[] = [...route.before];
+    if (route.takesFile) handlers.push(upload);
+    router[route.method](route.path, ...handlers, action(route));
+  }
+  router.use(noSuchRoute);
+  return router;
+}

@@ -1,0 +1,54 @@
+import type { ServerEvents } from '#shared/schemas/live.ts';
+import { logger } from '../config/logger.ts';
+import type { LiveServer } from './index.ts';
+
+let io: LiveServer | undefined;
+
+/** Called once when sockets are attached; without it (jobs, seeds, tests of services) publishing does nothing. */
+export function useServer(server: LiveServer): void {
+  io = server;
+}
+
+/** Sends an event to everyone in a buy's room, in all processes. Never throws: what is committed stays committed. */
+export function publishToBuy<E extends keyof ServerEvents>(
+  buyId: string,
+  event: E,
+  ...args: Parameters<ServerEvents[E]>
+): void {
+  try {
+    io?.to(`buy:${buyId}`).emit(event, ...args);
+  } catch (error) {
+    logger.error({ err: error, event }, 'publish failed');
+  }
+}
+
+/** Sends an event to every open page of one account. Never throws. */
+export function publishToAccount<E extends keyof ServerEvents>(
+  accountId: string,
+  event: E,
+  ...args: Parameters<ServerEvents[E]>
+): void {
+  try {
+    io?.to(`account:${accountId}`).emit(event, ...args);
+  } catch (error) {
+    logger.error({ err: error, event }, 'publish failed');
+  }
+}
+
+/** Ends every socket of an account, in all processes: after sign-out everywhere, removal or loss of a role. */
+export function disconnectAccount(accountId: string): void {
+  try {
+    io?.in(`account:${accountId}`).disconnectSockets(true);
+  } catch (error) {
+    logger.error({ err: error }, 'disconnect failed');
+  }
+}
+
+/** Ends every socket of one session. */
+export function disconnectSession(sessionId: string): void {
+  try {
+    io?.in(`session:${sessionId}`).disconnectSockets(true);
+  } catch (error) {
+    logger.error({ err: error }, 'disconnect failed');
+  }
+}

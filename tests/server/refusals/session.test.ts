@@ -1,0 +1,7 @@
+import { describeRights } from '#tests/support/rights.ts';
+
+describeRights('session', (route) => route.path.startsWith('/session'), {
+  'GET /session': 'anyone',
+  'POST /session': 'anyone',
+  'DELETE /session': 'anyone',
+});
