@@ -4,7 +4,12 @@ import type { Request, RequestHandler, Response } from 'express';
 import { z } from 'zod';
 import { env } from '../config/runtime.ts';
 import { DomainProblem, forbidden, notFound } from '../services/problem.ts';
-import { findAccountActor, findBuyActor, findClubActor, type AccountActor } from './actors.ts';
+import {
+  findAccountActor,
+  findBuyActor,
+  findClubActor,
+  type AccountActor,
+} from '../services/actors.ts';
 import { FileReply, type RouteDef } from './route.ts';
 
 const uuid = z.uuid();

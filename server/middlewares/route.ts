@@ -1,7 +1,7 @@
 import type { Readable } from 'node:stream';
 import type { Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
-import type { AccountActor, BuyActor, ClubActor } from './actors.ts';
+import type { AccountActor, BuyActor, ClubActor } from '../services/actors.ts';
 
 /** A reply that is not plain JSON: a file, a CSV, bytes kept by version. */
 export class FileReply {

@@ -5,9 +5,9 @@ import {
   type InferAttributes,
   type InferCreationAttributes,
 } from 'sequelize';
+import type { BuyState } from '#shared/domain/buys/states.ts';
 import type { PackPlan } from '#shared/domain/packs/types.ts';
 import { sequelize, type Tx } from '../config/database.ts';
-import type { BuyState } from '../middlewares/actors.ts';
 
 /**
  * One pooled order. `termsVersion` counts changes of state, lines, offers, charges, policies and times;

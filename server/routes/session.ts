@@ -4,7 +4,7 @@ import { env } from '../config/runtime.ts';
 import { limit } from '../middlewares/limits.ts';
 import { visitorRoute, type RouteDef } from '../middlewares/route.ts';
 import { findDemoAccount } from '../services/accounts/findDemoAccount.ts';
-import { signIn, signInAs, signOut } from '../services/accounts/signIn.ts';
+import { signIn, signInAs, signOut } from '../middlewares/signIn.ts';
 import { readSession } from '../services/accounts/readSession.ts';
 
 const quarterHour = 15 * 60_000;

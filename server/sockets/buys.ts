@@ -1,7 +1,7 @@
 import { JoinBuy } from '#shared/schemas/live.ts';
 import { select } from '../config/database.ts';
 import { logger } from '../config/logger.ts';
-import { findBuyActor, findClubActor } from '../middlewares/actors.ts';
+import { findBuyActor, findClubActor } from '../services/actors.ts';
 import type { LiveServer, LiveSocket } from './index.ts';
 
 async function lookersOf(io: LiveServer, buyId: string) {

@@ -1,7 +1,7 @@
 import type { SessionMembership, SessionReply } from '#shared/schemas/session.ts';
 import { select } from '../../config/database.ts';
 import { env } from '../../config/runtime.ts';
-import type { AccountActor } from '../../middlewares/actors.ts';
+import type { AccountActor } from '../actors.ts';
 
 interface Row {
   club_id: string;

@@ -1,5 +1,5 @@
+import type { BuyState } from '#shared/domain/buys/states.ts';
 import { select, execute, transact, type Tx } from '../../config/database.ts';
-import type { BuyState } from '../../middlewares/actors.ts';
 import { Buy } from '../../models/Buy.ts';
 import type { By } from '../actorName.ts';
 import { stale, wrongState } from '../problem.ts';

@@ -1,3 +1,4 @@
+import type { BuyState } from '#shared/domain/buys/states.ts';
 import type { Roles } from '#shared/schemas/fields.ts';
 import { pool } from '../config/database.ts';
 
@@ -26,17 +27,6 @@ export interface ClubActor extends AccountActor {
   readonly status: 'active' | 'left' | 'removed';
   readonly roles: Roles;
 }
-
-export type BuyState =
-  | 'draft'
-  | 'open'
-  | 'locked'
-  | 'ordered'
-  | 'arrived'
-  | 'splitting'
-  | 'pickup'
-  | 'settled'
-  | 'cancelled';
 
 /** Somebody before one buy: `organises` is "own buys", `helps` ends with the split day or after pickup. */
 export interface BuyActor extends ClubActor {

@@ -1,8 +1,8 @@
 import type { Request } from 'express';
 import type { SignInBody } from '#shared/schemas/session.ts';
-import { passport } from '../../config/passport.ts';
-import { findAccountActor, type AccountActor } from '../../middlewares/actors.ts';
-import { DomainProblem } from '../problem.ts';
+import { passport } from '../config/passport.ts';
+import { findAccountActor, type AccountActor } from '../services/actors.ts';
+import { DomainProblem } from '../services/problem.ts';
 
 function authenticate(req: Request, body: SignInBody): Promise<Express.User | false> {
   return new Promise((resolve, reject) => {

@@ -1,0 +1,18 @@
+/** The life of a buy, in order; any state before `ordered` may also end as `cancelled`. */
+export const buyStates = [
+  'draft',
+  'open',
+  'locked',
+  'ordered',
+  'arrived',
+  'splitting',
+  'pickup',
+  'settled',
+  'cancelled',
+] as const;
+export type BuyState = (typeof buyStates)[number];
+
+/** Whether a buy in `state` has come as far as `reached` (a cancelled one has not come anywhere). */
+export function hasReached(state: BuyState, reached: BuyState): boolean {
+  return state !== 'cancelled' && buyStates.indexOf(state) >= buyStates.indexOf(reached);
+}
