@@ -4,9 +4,15 @@ const api = { target: process.env.TAREWELL_DEV_API ?? 'http://127.0.0.1:4681' };
 
 export default defineConfig(() => ({
   boot: ['theme', 'problems', 'session', 'live'],
-  css: ['app.scss'],
+  css: [
+    '~@fontsource-variable/atkinson-hyperlegible-next/wght.css',
+    '~@fontsource-variable/atkinson-hyperlegible-mono/wght.css',
+    '~@fontsource-variable/bricolage-grotesque/wght.css',
+    'app.scss',
+  ],
   framework: {
     iconSet: 'svg-mdi-v7',
+    autoImportComponentCase: 'pascal',
     plugins: ['Dark', 'Dialog', 'Notify'],
   },
   build: {

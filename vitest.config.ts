@@ -28,7 +28,10 @@ export default defineConfig({
         },
       },
       {
-        plugins: [vue({ template: { transformAssetUrls } }), quasar()],
+        plugins: [
+          vue({ template: { transformAssetUrls } }),
+          quasar({ autoImportComponentCase: 'pascal' }),
+        ],
         resolve: { alias: { src } },
         test: {
           name: 'src',

@@ -1,38 +1,44 @@
+import type { ClientEvents, JoinAnswer, JoinBuy, ServerEvents } from '#shared/schemas/live.ts';
 import { io, type Socket } from 'socket.io-client';
 
-type JoinReply = { ok: true } | { ok: false; code: string };
-type Listener = (payload: unknown) => void;
-type Room = { holders: number; joined: Set<(again: boolean) => void> };
+type LiveSocket = Socket<ServerEvents, ClientEvents>;
+type Joined = (answer: JoinAnswer, again: boolean) => void;
+type Room = JoinBuy & { holders: Set<Joined> };
 
-let socket: Socket | null = null;
+const ANSWER_MS = 5_000;
+
+let socket: LiveSocket | null = null;
 const rooms = new Map<string, Room>();
-const handlers = new Map<string, Set<Listener>>();
+const attachers = new Set<(to: LiveSocket) => void>();
 const watchers = new Set<(connected: boolean) => void>();
 
 const tell = (connected: boolean) => watchers.forEach((watcher) => watcher(connected));
 
-async function join(name: string, room: Room, again: boolean) {
+async function ask({ club, buy, holders }: Room, again: boolean) {
   if (!socket?.connected) return;
-  const reply = (await socket
-    .timeout(5_000)
-    .emitWithAck('room:join', { room: name })
-    .catch(() => ({ ok: false, code: 'timeout' }))) as JoinReply;
-  if (reply.ok) room.joined.forEach((joined) => joined(again));
+  const asked = [...holders];
+  const answer = await socket
+    .timeout(ANSWER_MS)
+    .emitWithAck('buy:join', { club, buy })
+    .catch(() => null);
+  // No answer means a lost connection: the next connect asks again.
+  if (answer) asked.forEach((joined) => joined(answer, again));
 }
 
 /** Opens the one socket of this page; called when somebody is signed in. */
 export function connectSocket() {
   if (socket) return;
   let before = false;
-  socket = io({ transports: ['websocket'], withCredentials: true });
-  socket.on('connect', () => {
+  const opened: LiveSocket = io({ transports: ['websocket'], withCredentials: true });
+  socket = opened;
+  opened.on('connect', () => {
     tell(true);
     // The server forgets rooms with the connection, so each is asked for again.
-    for (const [name, room] of rooms) void join(name, room, before);
+    for (const room of rooms.values()) void ask(room, before);
     before = true;
   });
-  socket.on('disconnect', () => tell(false));
-  for (const [event, set] of handlers) for (const handler of set) socket.on(event, handler);
+  opened.on('disconnect', () => tell(false));
+  attachers.forEach((attach) => attach(opened));
 }
 
 /** Closes it; called at sign-out. */
@@ -41,45 +47,37 @@ export function disconnectSocket() {
   socket = null;
 }
 
-/** Listens for a live event and gives the function that stops listening. */
-export function onLive<Payload>(event: string, handler: (payload: Payload) => void): () => void {
-  const listener = handler as Listener;
-  const set = handlers.get(event) ?? new Set();
-  handlers.set(event, set.add(listener));
-  socket?.on(event, listener);
-  return () => {
-    set.delete(listener);
-    socket?.off(event, listener);
+/** Listens for a live event for as long as the page is open. */
+export function onLive<Event extends keyof ServerEvents>(
+  event: Event,
+  handler: ServerEvents[Event],
+) {
+  const attach = (to: LiveSocket) => {
+    to.on(event, handler as Parameters<typeof to.on<Event>>[1]);
   };
+  attachers.add(attach);
+  if (socket) attach(socket);
 }
 
-/** Tells whether the socket is connected, at each change. */
+/** Tells of each change of the connection; gives the function that stops it. */
 export function onConnection(watcher: (connected: boolean) => void): () => void {
   watchers.add(watcher);
   return () => watchers.delete(watcher);
 }
 
 /**
- * Asks to hear a room such as `buy:ID`, and asks again after each lost connection. `joined` is
- * called each time the server agrees, with `again` true when something may have been missed.
+ * Asks to hear a buy, and asks again after each lost connection. `joined` gets each answer, with
+ * `again` true when something may have been missed meanwhile. Gives the function that leaves.
  */
-export function joinRoom(name: string, joined: (again: boolean) => void = () => {}): () => void {
-  const room = rooms.get(name) ?? { holders: 0, joined: new Set() };
-  rooms.set(name, room);
-  room.holders += 1;
-  room.joined.add(joined);
-  void join(name, room, false);
+export function joinRoom(body: JoinBuy, joined: Joined): () => void {
+  const room = rooms.get(body.buy) ?? { ...body, holders: new Set<Joined>() };
+  rooms.set(body.buy, room);
+  room.holders.add(joined);
+  void ask(room, false);
   return () => {
-    room.joined.delete(joined);
-    room.holders -= 1;
-    if (room.holders > 0) return;
-    rooms.delete(name);
-    socket?.emit('room:leave', { room: name });
+    room.holders.delete(joined);
+    if (room.holders.size > 0) return;
+    rooms.delete(body.buy);
+    socket?.emit('buy:leave', { buy: body.buy });
   };
 }
-
-/** Sends an event and waits at most five seconds for the answer. */
-export const askLive = <Reply>(event: string, payload: unknown): Promise<Reply> =>
-  socket?.connected
-    ? (socket.timeout(5_000).emitWithAck(event, payload) as Promise<Reply>)
-    : Promise.reject(new Error('not connected'));

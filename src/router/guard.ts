@@ -4,14 +4,16 @@ type Visitor = {
   signedIn: boolean;
   firstRun: boolean;
   homeClub: { clubSlug: string } | null;
+  memberships: unknown[];
   findMembership: (slug: string) => unknown;
 };
 
-/** Where a visitor who asks for `/` belongs. */
-export function homeFor(visitor: Visitor): string {
+/** Where a visitor who asks for `/` belongs; `null`: they wait there to be let into a club. */
+export function homeFor(visitor: Visitor): string | null {
   if (visitor.firstRun) return '/welcome';
   if (!visitor.signedIn) return '/sign-in';
-  return visitor.homeClub ? `/c/${visitor.homeClub.clubSlug}/buys` : '/clubs/new';
+  if (visitor.homeClub) return `/c/${visitor.homeClub.clubSlug}/buys`;
+  return visitor.memberships.length > 0 ? null : '/clubs/new';
 }
 
 /** Only a path of this site is followed after sign-in, never another site's address. */
@@ -20,12 +22,12 @@ export const readNext = (next: unknown): string | null =>
 
 /** Lets a visitor through, or says where to go instead. */
 export function decide(to: RouteLocationNormalized, visitor: Visitor): true | RouteLocationRaw {
-  if (to.path === '/') return homeFor(visitor);
+  if (to.path === '/') return homeFor(visitor) ?? true;
   if (to.meta.needs === 'session' && !visitor.signedIn) {
     return { path: '/sign-in', query: { next: to.fullPath } };
   }
   if (to.meta.needs === 'guest' && visitor.signedIn) {
-    return readNext(to.query.next) ?? homeFor(visitor);
+    return readNext(to.query.next) ?? homeFor(visitor) ?? '/';
   }
   const { club } = to.params;
   if (to.meta.needs === 'session' && typeof club === 'string' && !visitor.findMembership(club)) {

@@ -12,7 +12,23 @@ const layouts = {
   print: () => import('src/layouts/PrintLayout.vue'),
 };
 
+const own: RouteRecordRaw[] = [
+  {
+    path: '/',
+    name: 'home',
+    component: () => import('src/pages/HomePage.vue'),
+    meta: { needs: 'none', layout: 'guest', title: '' },
+  },
+  {
+    path: '/:path(.*)*',
+    name: 'not-found',
+    component: () => import('src/pages/NotFoundPage.vue'),
+    meta: { needs: 'none', layout: 'guest', title: 'Not found' },
+  },
+];
+
 const all: RouteRecordRaw[] = [
+  ...own,
   ...accountsRoutes,
   ...clubsRoutes,
   ...saltsRoutes,
@@ -28,20 +44,4 @@ const inLayout = (layout: keyof typeof layouts): RouteRecordRaw => ({
 });
 
 /** Every page, under the layout that its `meta` names. */
-export const routes: RouteRecordRaw[] = [
-  {
-    path: '/',
-    name: 'home',
-    component: () => import('src/pages/HomePage.vue'),
-    meta: { needs: 'none', layout: 'guest', title: '' },
-  },
-  inLayout('main'),
-  inLayout('guest'),
-  inLayout('print'),
-  {
-    path: '/:path(.*)*',
-    name: 'not-found',
-    component: () => import('src/pages/NotFoundPage.vue'),
-    meta: { needs: 'none', layout: 'guest', title: 'Not found' },
-  },
-];
+export const routes: RouteRecordRaw[] = [inLayout('main'), inLayout('guest'), inLayout('print')];

@@ -17,11 +17,19 @@ export const useSessionStore = defineStore('session', () => {
   const signedIn = computed(() => account.value !== null);
   const currentClub = computed(() => findMembership(clubSlug.value));
   const homeClub = computed(
-    () => findMembership(localStorage.getItem(LAST_CLUB)) ?? memberships.value[0] ?? null,
+    () =>
+      findMembership(localStorage.getItem(LAST_CLUB)) ??
+      memberships.value.find(({ status }) => status === 'active') ??
+      memberships.value.find(({ status }) => status !== 'pending') ??
+      null,
   );
 
+  /** A membership that opens the club's pages: one that waits for approval doesn't. */
   function findMembership(slug: string | null) {
-    return memberships.value.find((membership) => membership.clubSlug === slug) ?? null;
+    return (
+      memberships.value.find(({ clubSlug: own, status }) => own === slug && status !== 'pending') ??
+      null
+    );
   }
 
   function receive(reply: SessionReply) {

@@ -1,0 +1,22 @@
+import { Notify } from 'quasar';
+import { asProblem } from 'src/api/problem.ts';
+
+const UNDO_MS = 10_000;
+
+/** Says that something is done; with `undo`, for ten seconds, how to take it back. */
+export function notifyDone(text: string, options: { undo?: () => unknown } = {}) {
+  const { undo } = options;
+  Notify.create({
+    message: text,
+    timeout: undo ? UNDO_MS : 4_000,
+    ...(undo ? { actions: [{ label: 'Undo', handler: () => void undo() }] } : {}),
+  });
+}
+
+/** Says what was refused, for acts without a form to say it in. */
+export function notifyProblem(error: unknown) {
+  const problem = asProblem(error);
+  if (problem.code === 'signed_out') return;
+  const caption = problem.detail === problem.title ? {} : { caption: problem.detail };
+  Notify.create({ type: 'negative', message: problem.title, ...caption, timeout: 8_000 });
+}
