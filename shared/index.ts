@@ -41,3 +41,22 @@ export {
   type ParsedMass,
 } from './domain/mass/parseMass.ts';
 export { formatMass, type MassDisplay } from './domain/mass/formatMass.ts';
+
+export { planPacks } from './domain/packs/planPacks.ts';
+export {
+  perGram,
+  pricePacks,
+  type PackPrice,
+  type PackProblem,
+} from './domain/packs/pricePacks.ts';
+export { shippingCost } from './domain/packs/shippingCost.ts';
+export type {
+  NextStep,
+  PackLine,
+  PackOffer,
+  PackPlan,
+  PackRequest,
+  PackSupplier,
+  Shipping,
+  ShippingStep,
+} from './domain/packs/packTypes.ts';

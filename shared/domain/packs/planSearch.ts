@@ -1,0 +1,195 @@
+import { candidatePlan, comparePlans, type CandidatePlan } from './candidatePlan.ts';
+import type { Budget } from './clock.ts';
+import { LineCovers, plainWeights } from './lineCovers.ts';
+import { listCovers } from './listCovers.ts';
+import { makeOption, mergeLines, type Option, type PlanBound } from './mergeLines.ts';
+import type { PackModel } from './packModel.ts';
+import type { Packing } from './packing.ts';
+import { LimitPricing, type LimitPrices } from './priceLimits.ts';
+import { shippingOptions, type ShippingOption } from './shippingOptions.ts';
+import { termsChoice, type TermsChoice } from './termsChoice.ts';
+
+/** A choice of terms that may still hold the best plan. */
+type Branch = { choice: TermsChoice; plainValue: number; bound: LimitPrices | null };
+
+/** How many states the first, quick merge keeps after each line. */
+const quickWidth = 60;
+
+/** Searches the best plan of a model exactly: each way the suppliers' terms can turn out, bounded. */
+export class PlanSearch {
+  best: CandidatePlan | null = null;
+  readonly #options: [number, ShippingOption[]][];
+
+  constructor(
+    readonly model: PackModel,
+    readonly covers: LineCovers,
+    readonly budget: Budget,
+    /** While no plan is known, dearer ones aren't looked for. */
+    readonly guess = Infinity,
+  ) {
+    this.#options = model.suppliers.flatMap((supplier, index): [number, ShippingOption[]][] =>
+      supplier.shared ? [[index, shippingOptions(supplier)]] : [],
+    );
+  }
+
+  /** Takes a plan into account, if its terms are met. */
+  offer(packings: Packing[]): void {
+    const plan = candidatePlan(this.model, packings);
+    if (!plan || (this.best && comparePlans(this.model, this.best, plan) <= 0)) return;
+    this.best = plan;
+  }
+
+  /** What a plan may cost at most to be of interest. */
+  #most(): number {
+    return this.best ? this.best.cost : this.guess;
+  }
+
+  #slack(): number {
+    const most = this.#most();
+    return most === Infinity ? Infinity : most + 1e-6 + 1e-8 * most;
+  }
+
+  #plainValue(allowed: readonly boolean[]): number {
+    let sum = 0;
+    for (const line of this.model.lines) {
+      const packing = this.covers.best(line, allowed);
+      if (!packing) return Infinity;
+      sum += packing.cost;
+    }
+    return sum;
+  }
+
+  /** All choices of terms whose plain bound is within reach, cheapest first. */
+  #branches(): Branch[] {
+    const branches: Branch[] = [];
+    const options = new Map<number, ShippingOption>();
+    const walk = (at: number, shipping: number, goods: number): void => {
+      this.budget.tick();
+      if (goods + shipping > this.#slack()) return;
+      const entry = this.#options[at];
+      if (!entry) {
+        const choice = termsChoice(this.model, options);
+        branches.push({ choice, plainValue: goods + shipping, bound: null });
+        return;
+      }
+      const [supplier, ways] = entry;
+      for (const way of ways) {
+        options.set(supplier, way);
+        const rest = way.used ? goods : this.#plainValue(termsChoice(this.model, options).allowed);
+        walk(at + 1, shipping + way.shipping, rest);
+      }
+      options.delete(supplier);
+    };
+    const all = this.model.suppliers.map(() => true);
+    const goods = this.#plainValue(all);
+    if (goods < Infinity) walk(0, 0, goods);
+    return branches.sort((a, b) => a.plainValue - b.plainValue);
+  }
+
+  /** Plans that ignore the suppliers' terms but happen to meet them. */
+  #tryPlain(): void {
+    const suppliers = this.#options.map(([supplier]) => supplier);
+    const sets = Math.min(2 ** suppliers.length, 64);
+    for (let set = 0; set < sets; set++) {
+      const allowed = this.model.suppliers.map(() => true);
+      suppliers.forEach((supplier, bit) => {
+        if ((set >> bit) & 1) allowed[supplier] = false;
+      });
+      const packings = this.model.lines.map((line) => this.covers.best(line, allowed));
+      if (packings.every((packing) => packing !== null)) this.offer(packings);
+    }
+  }
+
+  #bounds(branch: Branch, bound: LimitPrices): PlanBound[] {
+    const { choice } = branch;
+    const plain = { weights: plainWeights(this.model.suppliers.length), constant: choice.shipping };
+    const priced = bound.prices.some((price) => price > 0);
+    return priced ? [plain, { weights: bound.weights, constant: bound.constant }] : [plain];
+  }
+
+  /** Every packing of every line that a plan within reach can hold. */
+  #listOptions({ choice, plainValue }: Branch, bound: LimitPrices, bounds: PlanBound[]) {
+    const values = [plainValue, bound.value];
+    return this.model.lines.map((line, index): Option[] => {
+      const packing = bound.packings[index] as Packing;
+      const plain = this.covers.best(line, choice.allowed) as Packing;
+      const least = bounds.map(({ weights }, k) =>
+        k === 0 ? plain.cost : makeOption(packing, [], [{ weights, constant: 0 }]).reduced[0],
+      ) as number[];
+      const limits = bounds.map(({ weights }, k) => ({
+        weights,
+        most: (least[k] as number) + (this.#slack() - (values[k] as number)),
+      }));
+      const { suppliers } = this.model;
+      const { allowed, padded } = choice;
+      return listCovers(line, suppliers, allowed, padded, limits, this.budget).map((found) =>
+        makeOption(found, choice.limits, bounds),
+      );
+    });
+  }
+
+  /** Finds the best plan under one choice of terms, if it is within reach. */
+  #settle(branch: Branch): void {
+    const { bound, choice } = branch;
+    if (!bound || bound.value > this.#slack()) return;
+    if (bound.prices.every((price) => price === 0) && bound.excess.every((x) => x <= 0)) {
+      this.offer(bound.packings);
+      return;
+    }
+    const bounds = this.#bounds(branch, bound);
+    for (const width of [quickWidth, Infinity]) {
+      const lines = this.#listOptions(branch, bound, bounds).map((options) =>
+        undominatedOptions(options),
+      );
+      const merged = mergeLines(lines, choice.limits, bounds, this.#most(), width, this.budget);
+      if (merged.packings) this.offer(merged.packings);
+      if (merged.complete) return;
+    }
+  }
+
+  /**
+   * Looks for the best plan; finds it if it costs no more than the guess or a plan offered before.
+   *
+   * @throws OutOfTime with the best plan so far in `best`
+   */
+  run(): CandidatePlan | null {
+    this.#tryPlain();
+    const branches = this.#branches();
+    for (const branch of branches) {
+      if (branch.plainValue > this.#slack()) break;
+      const pricing = new LimitPricing(this.model, this.covers, branch.choice, {
+        tried: (packings) => this.offer(packings),
+        enough: () => this.#slack(),
+      });
+      branch.bound = pricing.raise();
+    }
+    const open = branches.filter((branch) => branch.bound !== null);
+    open.sort((a, b) => (a.bound?.value ?? 0) - (b.bound?.value ?? 0));
+    for (const branch of open) this.#settle(branch);
+    return this.best;
+  }
+}
+
+/** Of one line's options, those that no better one matches in every shared limit. */
+function undominatedOptions(options: Option[]): Option[] {
+  const sorted = options.sort(
+    (a, b) =>
+      a.packing.cost - b.packing.cost ||
+      a.packing.mass - b.packing.mass ||
+      a.packing.packs - b.packing.packs ||
+      compareCountsOf(a, b),
+  );
+  const kept: Option[] = [];
+  for (const option of sorted) {
+    if (!kept.some((other) => other.uses.every((use, d) => use <= (option.uses[d] as number)))) {
+      kept.push(option);
+    }
+  }
+  return kept;
+}
+
+function compareCountsOf(a: Option, b: Option): number {
+  const { counts } = a.packing;
+  const at = counts.findIndex((count, i) => count !== b.packing.counts[i]);
+  return at < 0 ? 0 : (b.packing.counts[at] as number) - (counts[at] as number);
+}
