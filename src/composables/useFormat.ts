@@ -1,6 +1,6 @@
 import { TZDate } from '@date-fns/tz';
 import { computed, inject, provide, type ComputedRef, type InjectionKey } from 'vue';
-import { formatMass, groupThousands } from '#shared/domain/mass/formatMass.ts';
+import { formatMass } from '#shared/domain/mass/formatMass.ts';
 import { formatMoney, minorToDecimal } from '#shared/domain/money/formatMoney.ts';
 
 /** What a club says about how it writes sums, masses and times. */
@@ -41,7 +41,20 @@ const makeFormat = (choices: FormatChoices) => {
       ? {}
       : ({ year: 'numeric' } as const);
   const read = (at: Instant) => new Date(at);
-  const narrow = (text: string) => text.replace(/[\u00a0\u2009'’](?=\d{3})/g, '\u202f');
+  const groupMark =
+    new Intl.NumberFormat(locale).formatToParts(1234567).find(({ type }) => type === 'group')
+      ?.value ?? '';
+  // Thousands are parted by a narrow gap, whatever mark the locale would put there.
+  const narrow = (text: string) =>
+    text.replace(/(?<=\d)(\D)(?=\d{3}(?!\d))/g, (mark) => (mark === groupMark ? '\u202f' : mark));
+  const decimals = minorToDecimal(0, currency).split('.')[1]?.length ?? 0;
+  const decimal = (exact: string) =>
+    narrow(
+      new Intl.NumberFormat(locale, {
+        minimumFractionDigits: exact.split('.')[1]?.length ?? 0,
+        maximumFractionDigits: exact.split('.')[1]?.length ?? 0,
+      }).format(exact as `${number}`),
+    ).replace('-', '−');
   const grams = (mg: number) => formatMass(mg, { locale }).replace(/\u00a0g$/, '');
 
   return {
@@ -49,19 +62,7 @@ const makeFormat = (choices: FormatChoices) => {
     /** '€ 14.96' in the club's manner. */
     money: (minor: number) => narrow(formatMoney(minor, currency, locale)),
     /** The same without the currency's sign, for columns that name it once. */
-    amount: (minor: number) => {
-      const exact = minorToDecimal(minor, currency);
-      const decimals = exact.split('.')[1]?.length ?? 0;
-      const parts = new Intl.NumberFormat(locale, {
-        minimumFractionDigits: decimals,
-        maximumFractionDigits: decimals,
-      }).formatToParts(exact as `${number}`);
-      return parts
-        .map(({ type, value }) =>
-          type === 'group' ? '\u202f' : type === 'minusSign' ? '−' : value,
-        )
-        .join('');
-    },
+    amount: (minor: number) => decimal(minorToDecimal(minor, currency)),
     /** '1 200 g', and what it is in the club's other unit when that is US. */
     mass: (mg: number) =>
       units === 'us'
@@ -71,23 +72,10 @@ const makeFormat = (choices: FormatChoices) => {
     grams,
     /** '25 kg', '250 g': a pack's size in the unit it is sold by. */
     pack: (mg: number) => formatMass(mg, { unit: 'auto', locale }),
-    /** The price of 100 g from minor units a gram, with one decimal more than the currency has. */
-    per100g: (minorPerGram: number) => {
-      const decimals = minorToDecimal(0, currency).split('.')[1]?.length ?? 0;
-      return new Intl.NumberFormat(locale, {
-        minimumFractionDigits: decimals,
-        maximumFractionDigits: decimals,
-      }).format((minorPerGram * 100) / 10 ** decimals);
-    },
-    number: (value: number, decimals = 0) =>
-      value < 0 || decimals > 0
-        ? narrow(
-            new Intl.NumberFormat(locale, {
-              minimumFractionDigits: decimals,
-              maximumFractionDigits: decimals,
-            }).format(value),
-          )
-        : groupThousands(String(Math.round(value))),
+    /** The price of 100 g from minor units a gram. */
+    per100g: (minorPerGram: number) =>
+      decimal(((minorPerGram * 100) / 10 ** decimals).toFixed(decimals)),
+    number: (value: number, places = 0) => decimal(value.toFixed(places)),
     percent: (permille: number) =>
       new Intl.NumberFormat(locale, { style: 'percent', maximumFractionDigits: 1 }).format(
         permille / 1000,

@@ -50,9 +50,12 @@ async function take(browser: Browser, size: (typeof widths)[number], mode: 'ligh
       () => document.documentElement.scrollWidth > document.documentElement.clientWidth,
     );
     if (sideways) console.log(`  ${size.width} ${mode}: the page scrolls sideways`);
+    // As tall as the page, so that what is fixed to the foot stands there and not half-way.
+    const height = await page.evaluate(() => document.documentElement.scrollHeight);
+    await page.setViewportSize({ width: size.width, height: Math.max(height, size.height) });
     const name = path.replace(/[^a-z0-9]+/gi, '-').replace(/^-|-$/g, '') || 'home';
     const file = join(values.out, `${name}-${size.width}-${mode}.png`);
-    await page.screenshot({ path: file, fullPage: true });
+    await page.screenshot({ path: file });
     console.log(file);
   } finally {
     await context.close();

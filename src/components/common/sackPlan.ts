@@ -10,18 +10,17 @@ export type SackPack = {
 export type Sack = { key: string; mark: string; height: number; filled: number; times: number };
 
 const MOST_DRAWN = 4;
-const fractions: Record<number, string> = { 250: '¼', 500: '½', 750: '¾' };
+const fractions: Record<number, string> = { 0.25: '¼', 0.5: '½', 0.75: '¾' };
 
-/** What stands on a sack: kilograms, a quarter, half or three quarters of one, or grams. */
+/** What stands on a sack: its kilograms. */
 export function sackMark(sizeMg: number): string {
-  const grams = sizeMg / 1000;
-  if (grams >= 1000) return String(Math.round(grams / 10) / 100);
-  return fractions[grams] ?? `${Math.round(grams)} g`;
+  const kilograms = Math.round(sizeMg / 1e4) / 100;
+  return fractions[kilograms] ?? String(kilograms);
 }
 
 /** A sack's height in px: the fifth root keeps 250 g visible beside 25 kg. */
 export const sackHeight = (sizeMg: number) =>
-  Math.round(Math.min(72, Math.max(22, 31 * (sizeMg / 1e6) ** 0.2)));
+  Math.round(Math.min(76, Math.max(26, 35 * (sizeMg / 1e6) ** 0.2)));
 
 /** The sacks to draw: equal ones are filled one after the other; more than four become one. */
 export function planSacks(packs: SackPack[]): Sack[] {
