@@ -3,10 +3,11 @@ import multer from 'multer';
 import { action } from '../middlewares/action.ts';
 import { noSuchRoute } from '../middlewares/problem.ts';
 import type { RouteDef } from '../middlewares/route.ts';
+import { buysRoutes } from './buys.ts';
 import { sessionRoutes } from './session.ts';
 
 /** Every route of the API; OpenAPI and the refusal tests read this list. */
-export const allRoutes: readonly RouteDef[] = [...sessionRoutes];
+export const allRoutes: readonly RouteDef[] = [...sessionRoutes, ...buysRoutes];
 
 const upload = multer({
   storage: multer.memoryStorage(),

@@ -1,3 +1,20 @@
 import type { RouteRecordRaw } from 'vue-router';
 
-export const buysRoutes: RouteRecordRaw[] = [];
+export const buysRoutes: RouteRecordRaw[] = [
+  {
+    path: '/c/:club/buys',
+    name: 'buys',
+    component: () => import('src/pages/buys/BuysPage.vue'),
+    props: true,
+    meta: { needs: 'session', layout: 'main', title: 'Buys', nav: 'buys' },
+  },
+  {
+    path: '/c/:club/buys/:buy',
+    name: 'buy',
+    component: () => import('src/pages/buys/BuyPage.vue'),
+    props: true,
+    meta: { needs: 'session', layout: 'main', title: 'Buy', nav: 'buys' },
+    // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
+    children: [],
+  },
+];

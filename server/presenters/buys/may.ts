@@ -1,0 +1,42 @@
+import type { BuyState } from '#shared/domain/buys/states.ts';
+import type { BuyMay } from '#shared/schemas/buyMay.ts';
+import type { BuyStanding } from '../../policies/actor.ts';
+import * as buys from '../../policies/buys.ts';
+
+/** Facts of the buy that an act depends on besides its state. */
+export interface MayFacts {
+  readonly state: BuyState;
+  readonly offeredToId: string | null;
+  readonly frozen: boolean;
+}
+
+const live: readonly BuyState[] = [
+  'draft',
+  'open',
+  'locked',
+  'ordered',
+  'arrived',
+  'splitting',
+  'pickup',
+];
+
+/** What this viewer may do with the buy now; the client shows an act exactly when its key is true. */
+export function mayWithBuy(actor: BuyStanding, facts: MayFacts): BuyMay {
+  const { state } = facts;
+  const organises = buys.canOrganiseBuy(actor);
+  const isIn = (...states: BuyState[]) => states.includes(state);
+  return {
+    edit: organises && isIn('draft', 'open'),
+    editMeeting: organises && live.includes(state),
+    open: organises && isIn('draft'),
+    discard: organises && isIn('draft'),
+    cancel: organises && isIn('draft', 'open', 'locked'),
+    copy: buys.canDraftBuy(actor),
+    namePeople: organises && live.includes(state),
+    offerResponsibility: buys.canOfferResponsibility(actor) && live.includes(state),
+    answerResponsibility:
+      buys.canAnswerResponsibility(actor) && facts.offeredToId === actor.membershipId,
+    passResponsibility: buys.canPassResponsibility(actor) && live.includes(state),
+    handOn: buys.canHandOn(actor) && isIn('locked', 'ordered', 'arrived', 'splitting', 'pickup'),
+  };
+}

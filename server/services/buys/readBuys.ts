@@ -1,0 +1,74 @@
+import type { BuyHeader, BuyList, BuyPerson } from '#shared/schemas/buys.ts';
+import { select, type Tx } from '../../config/database.ts';
+import { canDraftBuy } from '../../policies/buys.ts';
+import { presentBuyHeader } from '../../presenters/buys/presentBuyHeader.ts';
+import { presentBuySummary } from '../../presenters/buys/presentBuySummary.ts';
+import { findBuyActor, type BuyActor, type ClubActor } from '../actors.ts';
+import { notFound } from '../problem.ts';
+import { findBuyFacts } from './findBuyFacts.ts';
+
+/** The buys of a club that this member can see, newest first. */
+export async function listBuys(actor: ClubActor): Promise<BuyList> {
+  const rows = await findBuyFacts(actor.club.id, actor.membershipId);
+  return {
+    buys: rows.map((row) => presentBuySummary(row, actor)),
+    mayDraft: canDraftBuy(actor),
+  };
+}
+
+interface PersonRow {
+  part: 'organiser' | 'helper';
+  membership_id: string;
+  name: string;
+  takes_cash: boolean;
+}
+
+/** A buy's head as this actor sees it. */
+export async function readBuyHeader(actor: BuyActor, tx?: Tx): Promise<BuyHeader> {
+  const buyId = actor.buy.id;
+  const [[row], people, changes, [clock]] = await Promise.all([
+    findBuyFacts(actor.club.id, actor.membershipId, buyId, tx),
+    select<PersonRow>(
+      `select part, membership_id, m.display_name as name, takes_cash from (
+         select 'organiser' as part, membership_id, false as takes_cash from buy_organisers where buy_id = :buyId
+         union all
+         select 'helper', membership_id, takes_cash from buy_helpers where buy_id = :buyId) x
+       join memberships m on m.id = x.membership_id order by m.display_name, m.id`,
+      { buyId },
+      tx,
+    ),
+    select<{ terms_version: number; summary: string; at: Date; by: string | null }>(
+      `select t.terms_version, t.summary, t.at, m.display_name as by from terms_changes t
+       left join memberships m on m.id = t.changed_by_id
+       join buys b on b.id = t.buy_id and t.at >= b.opened_at
+       where t.buy_id = :buyId order by t.terms_version desc, t.at desc limit 100`,
+      { buyId },
+      tx,
+    ),
+    select<{ now: Date }>('select clock_timestamp() as now', {}, tx),
+  ]);
+  if (!row || !clock) throw notFound('This buy');
+  const person = ({ membership_id, name }: PersonRow): BuyPerson => ({
+    membershipId: membership_id,
+    name,
+  });
+  return presentBuyHeader(
+    row,
+    {
+      coOrganisers: people.filter(({ part }) => part === 'organiser').map(person),
+      helpers: people
+        .filter(({ part }) => part === 'helper')
+        .map((helper) => ({ ...person(helper), takesCash: helper.takes_cash })),
+      changes,
+      now: clock.now,
+    },
+    actor,
+  );
+}
+
+/** The head after an act, with the actor's part looked up anew. */
+export async function readBuyHeaderAgain(actor: ClubActor, buyId: string): Promise<BuyHeader> {
+  const again = await findBuyActor(actor, buyId);
+  if (!again) throw notFound('This buy');
+  return readBuyHeader(again);
+}
