@@ -46,18 +46,22 @@ export function bestPlan(
   budget: Budget,
   known?: Packing[],
 ): Best {
-  const most = dearest(model);
-  let guess = most / 64;
+  const most = known ? Infinity : dearest(model);
+  let guess = known ? Infinity : most / 64;
+  let found = known;
   for (;;) {
     const search = new PlanSearch(model, covers, budget, guess);
     try {
-      if (known) search.offer(known);
+      if (found) search.offer(found);
       const plan = search.run();
-      if (plan || guess > most) return { plan, exact: true };
+      if (plan && plan.cost <= guess) return { plan, exact: true };
+      if (guess > most) return { plan, exact: true };
+      // A plan met on the way, too dear to be proven best, is the next guess.
+      found = plan?.packings;
+      guess = plan ? plan.cost : guess * 4;
     } catch (error) {
       if (!(error instanceof OutOfTime)) throw error;
       return { plan: search.best, exact: false };
     }
-    guess *= 4;
   }
 }

@@ -24,7 +24,7 @@ export class PlanSearch {
     readonly model: PackModel,
     readonly covers: LineCovers,
     readonly budget: Budget,
-    /** While no plan is known, dearer ones aren't looked for. */
+    /** Plans dearer than this aren't looked for. */
     readonly guess = Infinity,
   ) {
     this.#options = model.suppliers.flatMap((supplier, index): [number, ShippingOption[]][] =>
@@ -41,7 +41,7 @@ export class PlanSearch {
 
   /** What a plan may cost at most to be of interest. */
   #most(): number {
-    return this.best ? this.best.cost : this.guess;
+    return this.best ? Math.min(this.best.cost, this.guess) : this.guess;
   }
 
   #slack(): number {
@@ -148,7 +148,7 @@ export class PlanSearch {
   }
 
   /**
-   * Looks for the best plan; finds it if it costs no more than the guess or a plan offered before.
+   * Looks for the best plan; what it returns is proven best if it costs no more than the guess.
    *
    * @throws OutOfTime with the best plan so far in `best`
    */
