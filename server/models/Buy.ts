@@ -6,7 +6,7 @@ import {
   type InferCreationAttributes,
 } from 'sequelize';
 import type { BuyState } from '#shared/domain/buys/states.ts';
-import type { PackPlan } from '#shared/domain/packs/types.ts';
+import type { PackPlan } from '#shared/domain/packs/packTypes.ts';
 import { sequelize, type Tx } from '../config/database.ts';
 
 /**
