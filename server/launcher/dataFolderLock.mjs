@@ -2,7 +2,7 @@ import { mkdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { setTimeout as pause } from 'node:timers/promises';
 import { findNpm, onEnd } from './command.mjs';
-import { takeLock } from './ownerLock.mjs';
+import { findHolder, takeLock } from './ownerLock.mjs';
 import { LauncherProblem } from './problem.mjs';
 import { endProcess, isSameProcess, isStillThere } from './processes.mjs';
 import { say } from './steps.mjs';
@@ -13,6 +13,9 @@ export function makeDataFolder(folder) {
 }
 
 const lockOf = (folder) => join(folder, 'running.json');
+
+/** @returns what the command that works on a data folder now wrote into its lock, or null */
+export const findRunningInstallation = (folder) => findHolder(lockOf(folder));
 
 // One whose npm was killed is about to stop by itself.
 const isClosing = (holder) => Boolean(holder.npm) && !isSameProcess(holder.npm);

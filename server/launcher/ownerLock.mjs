@@ -19,6 +19,12 @@ const parse = (text) => {
   }
 };
 
+/** @returns what the live owner of a lock file wrote into it, or null */
+export function findHolder(file) {
+  const holder = parse(read(file));
+  return holder?.file === file && isStillThere(holder) ? holder : null;
+}
+
 /**
  * Takes a lock file for this process. A lock whose process is gone, or that was copied here with
  * its folder, is taken over.
@@ -36,11 +42,11 @@ export async function takeLock(file, facts = {}) {
       if (error.code !== 'EEXIST') throw error;
     }
     const text = read(file);
-    const holder = parse(text);
-    if (holder?.file === file && isStillThere(holder)) return { holder };
+    const holder = findHolder(file);
+    if (holder) return { holder };
     // Empty for a moment while its owner writes it.
     if (text === '') await pause(200);
-    if (text !== null && read(file) === text && removeStale(file, text)) left = holder;
+    if (text !== null && read(file) === text && removeStale(file, text)) left = parse(text);
   }
 }
 

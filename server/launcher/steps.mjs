@@ -28,7 +28,7 @@ export async function step(what, work) {
     say(`${outcome} (${formatDuration(performance.now() - begun)})`);
     return result;
   } catch (error) {
-    say(`failed after ${formatDuration(performance.now() - begun)}`);
+    say(`${isEnding() ? 'stopped' : 'failed'} after ${formatDuration(performance.now() - begun)}`);
     throw error;
   }
 }

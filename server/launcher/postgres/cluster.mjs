@@ -85,23 +85,21 @@ export function findPostmaster(folder) {
     : null;
 }
 
-// A number in postmaster.pid that now belongs to another program stops PostgreSQL from starting. The file may go only
-// when no process of the old server is left: it is what keeps two servers off the same files.
+// What a killed server left. PostgreSQL clears the file itself, but not while its number belongs to another program or to
+// a process nobody has collected yet. Without the file nothing keeps two servers off the same data: first wait until no
+// process of the old one is left.
 async function clearStalePid(folder) {
   const file = join(folder, 'postmaster.pid');
   if (!existsSync(file)) return;
-  const pid = Number(readFileSync(file, 'utf8').split('\n')[0]);
-  if (commandLine(pid) === null) return;
   const deadline = Date.now() + 15_000;
   while (processesIn(folder).length > 0) {
     if (Date.now() > deadline) {
-      throw new LauncherProblem(
-        `Processes of an earlier PostgreSQL still use ${folder}: ${processesIn(folder).join(', ')}.`,
-      );
+      const pids = processesIn(folder).join(', ');
+      throw new LauncherProblem(`Processes of an earlier PostgreSQL still use ${folder}: ${pids}.`);
     }
-    await pause(100);
+    await pause(50);
   }
-  rmSync(file);
+  rmSync(file, { force: true });
 }
 
 /**
