@@ -18,7 +18,8 @@ export function useApiForm<Result>(
     pending.value = true;
     problem.value = null;
     try {
-      await options.onDone?.(await submit());
+      const result = await submit();
+      await options.onDone?.(result);
       return true;
     } catch (error) {
       problem.value = asProblem(error);

@@ -24,9 +24,9 @@ const reasons: Record<string, string> = {
  * A number as a person types it: what was typed stays, the value read is echoed, and where a mark
  * could mean two things both readings are offered. The model changes only to what could be read.
  */
-export function useTypedValue(model: Ref<number | null | undefined>, choices: Choices) {
+export function useTypedValue(model: Ref<number | null>, choices: Choices) {
   const { parse, say, write, check, required } = choices;
-  const written = () => (typeof model.value === 'number' ? write(model.value) : '');
+  const written = () => (model.value !== null ? write(model.value) : '');
   const text = ref(written());
 
   const parsed = computed(() => parse(text.value));
@@ -54,7 +54,7 @@ export function useTypedValue(model: Ref<number | null | undefined>, choices: Ch
   });
   watch(model, (value) => {
     // Someone else changed it: show theirs. What is being typed means the same and stays.
-    const gone = value === null || value === undefined;
+    const gone = value === null;
     const same = parsed.value.ok ? parsed.value.value === value : gone;
     if (!same && (!gone || parsed.value.ok)) text.value = written();
   });
