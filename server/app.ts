@@ -11,7 +11,8 @@ import { problemHandler } from './middlewares/problem.ts';
 import { sameOrigin } from './middlewares/sameOrigin.ts';
 import { renewSession, sessions } from './middlewares/session.ts';
 import { operationsRouter } from './routes/operations.ts';
-import { apiRouter } from './routes/index.ts';
+import { allRoutes, apiRouter } from './routes/index.ts';
+import { openApiRouter } from './routes/openapi.ts';
 
 const clientFolder = path.join(import.meta.dirname, '..', 'dist', 'spa');
 
@@ -53,6 +54,7 @@ export function createApp(): Express {
           fontSrc: ["'self'"],
           imgSrc: ["'self'", 'data:', 'blob:'],
           connectSrc: ["'self'"],
+          frameSrc: ["'self'"],
           workerSrc: ["'self'"],
           manifestSrc: ["'self'"],
           formAction: ["'self'"],
@@ -66,6 +68,7 @@ export function createApp(): Express {
   );
   app.use(operationsRouter());
   app.use(compression());
+  app.use(openApiRouter(allRoutes));
   app.use(
     '/api/v1',
     sessions,

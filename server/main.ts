@@ -5,6 +5,7 @@ import { pool, sequelize } from './config/database.ts';
 import { logger } from './config/logger.ts';
 import { migrate } from './config/migrate.ts';
 import { env, publicUrl, setListeningUrl } from './config/runtime.ts';
+import { closeMail, openMail } from './mail/transport.ts';
 import { startJobs } from './jobs/index.ts';
 import { attachSockets } from './sockets/index.ts';
 
@@ -13,6 +14,7 @@ const stopDeadlineMs = 3_000;
 async function start(): Promise<void> {
   const applied = await migrate(sequelize);
   if (applied.length > 0) logger.info({ applied }, 'schema brought forward');
+  await openMail();
   const http = createServer(createApp());
   const io = attachSockets(http);
   await new Promise<void>((resolve, reject) => {
@@ -36,6 +38,7 @@ async function start(): Promise<void> {
     setTimeout(() => process.exit(0), stopDeadlineMs).unref();
     void (async () => {
       await stopJobs();
+      await closeMail();
       await new Promise<void>((resolve) => void io.close(() => resolve()));
       await sequelize.close();
       await pool.end();

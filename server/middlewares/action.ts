@@ -2,11 +2,13 @@ import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import type { Request, RequestHandler, Response } from 'express';
 import { z } from 'zod';
+import { requestSeconds } from '../config/metrics.ts';
 import { env } from '../config/runtime.ts';
 import { DomainProblem, forbidden, notFound } from '../services/problem.ts';
 import {
   findAccountActor,
   findBuyActor,
+  findBuyActorAt,
   findClubActor,
   type AccountActor,
 } from '../services/actors.ts';
@@ -35,6 +37,12 @@ function shaped(schema: z.ZodType | undefined, value: unknown): unknown {
 async function findActor(route: RouteDef, req: Request) {
   const requestId = String(req.id);
   const accountId = req.user?.id;
+  if (route.level === 'buy' && accountId !== undefined && uuid.safeParse(req.params.buy).success) {
+    const { club, buy } = req.params;
+    const found = await findBuyActorAt(accountId, String(club), String(buy), requestId);
+    if (found && (found.status === 'active' || route.former)) return found;
+    // Whoever isn't found is told by the steps below what is missing.
+  }
   const account: AccountActor | null =
     accountId === undefined ? null : await findAccountActor(accountId, requestId);
   if (route.level === 'visitor') return account;
@@ -78,6 +86,8 @@ async function sendFile(res: Response, req: Request, reply: FileReply): Promise<
  */
 export function action(route: RouteDef): RequestHandler {
   return async (req, res) => {
+    const took = requestSeconds.startTimer({ method: route.method, route: route.path });
+    res.once('finish', () => took({ status: String(res.statusCode) }));
     const actor = await findActor(route, req);
     if (!route.allow(actor as never)) throw forbidden();
     const call = {

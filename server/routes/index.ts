@@ -4,10 +4,11 @@ import { action } from '../middlewares/action.ts';
 import { noSuchRoute } from '../middlewares/problem.ts';
 import type { RouteDef } from '../middlewares/route.ts';
 import { buysRoutes } from './buys.ts';
+import { outboxRoutes } from './outbox.ts';
 import { sessionRoutes } from './session.ts';
 
 /** Every route of the API; OpenAPI and the refusal tests read this list. */
-export const allRoutes: readonly RouteDef[] = [...sessionRoutes, ...buysRoutes];
+export const allRoutes: readonly RouteDef[] = [...sessionRoutes, ...outboxRoutes, ...buysRoutes];
 
 const upload = multer({
   storage: multer.memoryStorage(),

@@ -5,6 +5,7 @@ import { Server, type Socket } from 'socket.io';
 import type { ClientEvents, ServerEvents } from '#shared/schemas/live.ts';
 import { pool } from '../config/database.ts';
 import { logger } from '../config/logger.ts';
+import { socketsOpen } from '../config/metrics.ts';
 import { passport } from '../config/passport.ts';
 import { isSameOrigin } from '../middlewares/sameOrigin.ts';
 import { sessions } from '../middlewares/session.ts';
@@ -54,6 +55,8 @@ export function attachSockets(http: HttpServer): LiveServer {
     next();
   });
   io.on('connection', (socket) => {
+    socketsOpen.inc();
+    socket.once('disconnect', () => socketsOpen.dec());
     void socket.join([`account:${socket.data.accountId}`, `session:${socket.data.sessionId}`]);
     handleBuyEvents(io, socket);
   });
