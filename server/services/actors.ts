@@ -38,6 +38,10 @@ export interface BuyActor extends ClubActor {
     readonly helps: boolean;
     readonly takesCash: boolean;
     readonly takesPart: boolean;
+    readonly sheetVersion: number;
+    readonly planVersion: number | null;
+    /** The club shows most members only the total of a reportable salt. */
+    readonly hidesReportable: boolean;
   };
 }
 
@@ -57,6 +61,31 @@ interface ClubRow {
   currency: string;
   locale: string;
   time_zone: string;
+}
+
+const clubColumns = `a.id as account_id, a.email, a.display_name as account_name, m.id as membership_id,
+  m.display_name as name, m.status, m.is_organiser, m.is_treasurer, m.is_steward,
+  c.id as club_id, c.slug, c.name as club_name, c.currency, c.locale, c.time_zone`;
+
+function asClubActor(row: ClubRow, requestId: string): ClubActor {
+  return {
+    accountId: row.account_id,
+    email: row.email,
+    accountName: row.account_name,
+    requestId,
+    club: {
+      id: row.club_id,
+      slug: row.slug,
+      name: row.club_name,
+      currency: row.currency,
+      locale: row.locale,
+      timeZone: row.time_zone,
+    },
+    membershipId: row.membership_id,
+    name: row.name,
+    status: row.status,
+    roles: { organiser: row.is_organiser, treasurer: row.is_treasurer, steward: row.is_steward },
+  };
 }
 
 /** The account behind a session, or null when it is gone. */
@@ -81,35 +110,14 @@ export async function findClubActor(
 ): Promise<ClubActor | null> {
   const { rows } = await pool.query<ClubRow>({
     name: 'club-actor',
-    text: `select a.id as account_id, a.email, a.display_name as account_name, m.id as membership_id,
-        m.display_name as name, m.status, m.is_organiser, m.is_treasurer, m.is_steward,
-        c.id as club_id, c.slug, c.name as club_name, c.currency, c.locale, c.time_zone
-      from clubs c
+    text: `select ${clubColumns} from clubs c
       join memberships m on m.club_id = c.id and m.account_id = $1 and m.status <> 'pending'
       join accounts a on a.id = m.account_id and a.deleted_at is null
       where c.slug = $2`,
     values: [accountId, clubSlug],
   });
   const row = rows[0];
-  if (!row) return null;
-  return {
-    accountId: row.account_id,
-    email: row.email,
-    accountName: row.account_name,
-    requestId,
-    club: {
-      id: row.club_id,
-      slug: row.slug,
-      name: row.club_name,
-      currency: row.currency,
-      locale: row.locale,
-      timeZone: row.time_zone,
-    },
-    membershipId: row.membership_id,
-    name: row.name,
-    status: row.status,
-    roles: { organiser: row.is_organiser, treasurer: row.is_treasurer, steward: row.is_steward },
-  };
+  return row ? asClubActor(row, requestId) : null;
 }
 
 interface BuyRow {
@@ -119,33 +127,28 @@ interface BuyRow {
   helps: boolean;
   takes_cash: boolean;
   takes_part: boolean;
+  sheet_version: number;
+  plan_version: number | null;
+  hide_reportable_grams: boolean;
 }
 
-/**
- * The actor before one buy of their club. Null when the buy is not of this club, is a draft or a cancelled draft that
- * the actor does not organise, or when a former member has no part in it.
- */
-export async function findBuyActor(actor: ClubActor, buyId: string): Promise<BuyActor | null> {
-  const { rows } = await pool.query<BuyRow>({
-    name: 'buy-actor',
-    text: `select b.state, b.responsible_id,
-        (b.responsible_id = $3 or o.membership_id is not null) as organises,
-        (h.membership_id is not null and b.state in ('arrived', 'splitting', 'pickup')
-          and (b.splits_at is null
-            or (now() at time zone c.time_zone)::date <= (coalesce(b.split_ends_at, b.splits_at) at time zone c.time_zone)::date)
-        ) as helps,
-        coalesce(h.takes_cash, false) as takes_cash,
-        exists (select 1 from pledges p where p.buy_id = b.id and p.membership_id = $3) as takes_part
-      from buys b
-      join clubs c on c.id = b.club_id
-      left join buy_organisers o on o.buy_id = b.id and o.membership_id = $3
-      left join buy_helpers h on h.buy_id = b.id and h.membership_id = $3
-      where b.id = $1 and b.club_id = $2
-        and (b.opened_at is not null or b.responsible_id = $3 or o.membership_id is not null)`,
-    values: [buyId, actor.club.id, actor.membershipId],
-  });
-  const row = rows[0];
-  if (!row) return null;
+/** Before buy b of club c and membership m: who may see it, and as what. */
+const buyColumns = `b.state, b.responsible_id, b.sheet_version, b.plan_version, c.hide_reportable_grams,
+  (b.responsible_id = m.id or o.membership_id is not null) as organises,
+  (h.membership_id is not null and b.state in ('arrived', 'splitting', 'pickup')
+    and (b.splits_at is null
+      or (now() at time zone c.time_zone)::date <= (coalesce(b.split_ends_at, b.splits_at) at time zone c.time_zone)::date)
+  ) as helps,
+  coalesce(h.takes_cash, false) as takes_cash,
+  exists (select 1 from pledges p where p.buy_id = b.id and p.membership_id = m.id) as takes_part`;
+
+const buyJoins = `left join buy_organisers o on o.buy_id = b.id and o.membership_id = m.id
+  left join buy_helpers h on h.buy_id = b.id and h.membership_id = m.id`;
+
+const buyIsSeen =
+  '(b.opened_at is not null or b.responsible_id = m.id or o.membership_id is not null)';
+
+function asBuyActor(actor: ClubActor, buyId: string, row: BuyRow): BuyActor | null {
   const active = actor.status === 'active';
   if (!active && !row.takes_part) return null;
   return {
@@ -158,6 +161,48 @@ export async function findBuyActor(actor: ClubActor, buyId: string): Promise<Buy
       helps: active && row.helps,
       takesCash: active && row.helps && row.takes_cash,
       takesPart: row.takes_part,
+      sheetVersion: row.sheet_version,
+      planVersion: row.plan_version,
+      hidesReportable: row.hide_reportable_grams,
     },
   };
+}
+
+/**
+ * The actor before one buy of their club. Null when the buy is not of this club, is a draft or a cancelled draft that
+ * the actor does not organise, or when a former member has no part in it.
+ */
+export async function findBuyActor(actor: ClubActor, buyId: string): Promise<BuyActor | null> {
+  const { rows } = await pool.query<BuyRow>({
+    name: 'buy-actor',
+    text: `select ${buyColumns} from buys b
+      join clubs c on c.id = b.club_id
+      join memberships m on m.id = $3
+      ${buyJoins}
+      where b.id = $1 and b.club_id = $2 and ${buyIsSeen}`,
+    values: [buyId, actor.club.id, actor.membershipId],
+  });
+  const row = rows[0];
+  return row ? asBuyActor(actor, buyId, row) : null;
+}
+
+/** Account, membership and buy in one statement, for the routes of a buy. Null says nothing of which is missing. */
+export async function findBuyActorAt(
+  accountId: string,
+  clubSlug: string,
+  buyId: string,
+  requestId: string,
+): Promise<BuyActor | null> {
+  const { rows } = await pool.query<ClubRow & BuyRow>({
+    name: 'buy-actor-at',
+    text: `select ${clubColumns}, ${buyColumns} from clubs c
+      join memberships m on m.club_id = c.id and m.account_id = $1 and m.status <> 'pending'
+      join accounts a on a.id = m.account_id and a.deleted_at is null
+      join buys b on b.club_id = c.id and b.id = $3
+      ${buyJoins}
+      where c.slug = $2 and ${buyIsSeen}`,
+    values: [accountId, clubSlug, buyId],
+  });
+  const row = rows[0];
+  return row ? asBuyActor(asClubActor(row, requestId), buyId, row) : null;
 }

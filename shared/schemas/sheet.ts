@@ -20,6 +20,13 @@ const LineSalt = z.strictObject({
   signalWord: z.enum(['Danger', 'Warning']).nullable(),
   hazards: z.array(z.string()),
   pictograms: z.array(z.string()),
+  cautions: z.array(
+    z.strictObject({
+      code: z.string(),
+      tone: z.enum(['danger', 'amber', 'slate']),
+      text: z.string(),
+    }),
+  ),
   storage: z.string(),
   note: z.string(),
 });

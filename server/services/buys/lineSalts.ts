@@ -1,56 +1,51 @@
 import type { LineSalt } from '#shared/domain/buys/sheetTerms.ts';
+import { cautionsFor } from '#shared/domain/salts/cautions.ts';
+import { factsOfSalt } from '#shared/domain/salts/factsOfSalt.ts';
 import { findCatalogueSalt } from '#shared/domain/salts/findCatalogueSalt.ts';
-import { hazardText, pictogramsOf, signalWordOf } from '#shared/domain/salts/hazards.ts';
+import { hazardText } from '#shared/domain/salts/hazards.ts';
+import type { ClubSalt } from '#shared/schemas/salts.ts';
+import { presentCatalogueSalt, presentOwnSalt, type OwnSaltRow } from '../../presenters/salts.ts';
 
-/** A salt of the club's own, as its row says. */
-export interface OwnSaltRow {
-  readonly name: string;
-  readonly formula: string | null;
-  readonly hazard_statements: string[];
-  readonly signal_word: 'Danger' | 'Warning' | null;
-  readonly storage: string;
-  readonly note: string;
-}
-
-function described(
-  facts: Pick<LineSalt, 'name' | 'formula' | 'storage' | 'note' | 'reportable'>,
-  statements: readonly string[],
-  word: 'Danger' | 'Warning' | null,
-): LineSalt {
+function asLineSalt(salt: ClubSalt): LineSalt {
   return {
-    ...facts,
-    classified: statements.length > 0,
-    signalWord: signalWordOf(statements, word),
-    hazards: statements.map(hazardText),
-    pictograms: pictogramsOf(statements),
+    name: salt.name,
+    formula: salt.formula,
+    classified: salt.classified,
+    reportable: salt.reportable,
+    signalWord: salt.signalWord,
+    hazards: salt.statements.map(hazardText),
+    pictograms: salt.pictograms,
+    cautions: cautionsFor(factsOfSalt(salt), 'line'),
+    storage: salt.storage,
+    note: salt.note,
   };
 }
 
-/** What a line shows of its salt: from the shipped list, else from the club's own. */
+const unknown = (name: string): LineSalt => ({
+  name,
+  formula: null,
+  classified: false,
+  reportable: false,
+  signalWord: null,
+  hazards: [],
+  pictograms: [],
+  cautions: [],
+  storage: '',
+  note: '',
+});
+
+// The shipped list doesn't change while the process runs.
+const shipped = new Map<string, LineSalt>();
+
+/** What a line shows of its salt: from the shipped list, else from the club's own row. */
 export function describeLineSalt(saltId: string, own: OwnSaltRow | null): LineSalt {
+  const known = shipped.get(saltId);
+  if (known) return known;
   const listed = findCatalogueSalt(saltId);
   if (listed) {
-    return described(
-      {
-        name: listed.name,
-        formula: listed.formula,
-        storage: listed.storage.value,
-        note: listed.notes[0]?.value ?? '',
-        reportable: listed.regulatoryFlags.some(({ list }) => list === 'reportable'),
-      },
-      listed.ghs.statements,
-      listed.ghs.signalWord,
-    );
+    const salt = asLineSalt(presentCatalogueSalt(listed, false));
+    shipped.set(saltId, salt);
+    return salt;
   }
-  return described(
-    {
-      name: own?.name ?? saltId,
-      formula: own?.formula ?? null,
-      storage: own?.storage ?? '',
-      note: own?.note ?? '',
-      reportable: false,
-    },
-    own?.hazard_statements ?? [],
-    own?.signal_word ?? null,
-  );
+  return own ? asLineSalt(presentOwnSalt(own, false)) : unknown(saltId);
 }

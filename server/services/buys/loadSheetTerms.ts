@@ -6,8 +6,9 @@ import type {
   SheetTerms,
 } from '#shared/domain/buys/sheetTerms.ts';
 import { select, type Tx } from '../../config/database.ts';
+import type { OwnSaltRow } from '../../presenters/salts.ts';
 import { notFound } from '../problem.ts';
-import { describeLineSalt, type OwnSaltRow } from './lineSalts.ts';
+import { describeLineSalt } from './lineSalts.ts';
 
 type LineRow = Omit<SheetTerms['lines'][number], 'salt' | 'totalsOnly'> & {
   own: OwnSaltRow | null;
@@ -48,9 +49,10 @@ export const termsColumns = `b.id, b.club_id, c.currency, b.terms_version, b.sta
   b.spread_max_permille, c.hide_reportable_grams,
   (select json_agg(json_build_object('id', l.id, 'saltId', l.salt_id, 'stepMg', l.step_mg,
       'reservePermyriad', l.reserve_permyriad, 'surplus', l.surplus, 'shortage', l.shortage, 'note', l.note,
-      'own', case when cs.id is not null then json_build_object('name', cs.name, 'formula', cs.formula,
-        'hazard_statements', cs.hazard_statements, 'signal_word', cs.signal_word, 'storage', cs.storage,
-        'note', cs.note) end) order by l.position, l.id)
+      'own', case when cs.id is not null then json_build_object('id', cs.id, 'kind', cs.kind, 'name', cs.name,
+        'formula', cs.formula, 'cas', cs.cas, 'composition', cs.composition, 'hazardStatements', cs.hazard_statements,
+        'signalWord', cs.signal_word, 'storage', cs.storage, 'note', cs.note, 'archivedAt', null,
+        'version', cs.version) end) order by l.position, l.id)
     from lines l left join club_salts cs on cs.club_id = b.club_id and cs.id::text = l.salt_id
     where l.buy_id = b.id and l.removed_at is null) as lines,
   (select json_agg(json_build_object('id', o.id, 'lineId', l.id, 'supplierId', o.supplier_id, 'label', o.label,

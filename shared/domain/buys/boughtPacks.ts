@@ -1,4 +1,5 @@
 import { exactSum, safeNumber } from '../money/minor.ts';
+import { grossPriceMinor } from '../salts/grossPrice.ts';
 import type { ShareCharge } from '../shares/shareTypes.ts';
 import type { SheetCharge, SheetOffer, SheetTerms } from './sheetTerms.ts';
 
@@ -17,19 +18,14 @@ export const shippingChargeId = (supplierId: string) => shippingPrefix + supplie
 export const supplierOfShipping = (chargeId: string) =>
   chargeId.startsWith(shippingPrefix) ? chargeId.slice(shippingPrefix.length) : null;
 
-/** `amount * ppm / 1 000 000`, half up. */
-function partsPerMillion(amount: number, ppm: number, over = 1_000_000n): number {
-  return safeNumber((BigInt(amount) * BigInt(ppm) * 2n + over) / (over * 2n), 'amount');
+/** The tax that an amount contains, half up. */
+function containedTax(amount: number, ppm: number): number {
+  const over = 1_000_000n + BigInt(ppm);
+  return safeNumber((BigInt(amount) * BigInt(ppm) * 2n + over) / (over * 2n), 'taxMinor');
 }
 
-/** What a pack costs with tax, in minor units, half up where the price came without. */
-export function offerPriceMinor(offer: SheetOffer): number {
-  if (offer.priceIncludesTax) return offer.priceMinor;
-  return exactSum(
-    [offer.priceMinor, partsPerMillion(offer.priceMinor, offer.taxRatePpm)],
-    'priceMinor',
-  );
-}
+/** What the club pays for a pack, tax included. */
+export const offerPriceMinor = (offer: SheetOffer): number => grossPriceMinor(offer);
 
 /** What the chosen packs bring for a line. */
 export type Bought = {
@@ -71,9 +67,7 @@ export function boughtByLine(
 function rateOf(offers: readonly SheetOffer[], costs: readonly number[], cost: number): number {
   const rates = new Set(offers.map(({ taxRatePpm }) => taxRatePpm));
   if (rates.size <= 1) return (offers[0]?.taxRatePpm ?? 0) / 1_000_000;
-  const taxes = offers.map(({ taxRatePpm: ppm }, index) =>
-    partsPerMillion(costs[index] ?? 0, ppm, 1_000_000n + BigInt(ppm)),
-  );
+  const taxes = offers.map(({ taxRatePpm: ppm }, index) => containedTax(costs[index] ?? 0, ppm));
   const tax = exactSum(taxes, 'taxMinor');
   return tax / Math.max(1, cost - tax);
 }

@@ -1,3 +1,4 @@
+import type { Caution } from '../salts/cautions.ts';
 import type { Shipping } from '../packs/packTypes.ts';
 import type { ChargeBasis } from '../shares/shareTypes.ts';
 import type { BuyState } from './states.ts';
@@ -15,6 +16,8 @@ export type LineSalt = {
   hazards: string[];
   /** GHS codes such as GHS03. */
   pictograms: string[];
+  /** One sentence of what can happen and one of what to do, the gravest first. */
+  cautions: Caution[];
   storage: string;
   note: string;
 };
