@@ -1,4 +1,4 @@
-import { cpSync, existsSync, readdirSync, rmSync, statSync } from 'node:fs';
+import { cpSync, existsSync, mkdirSync, readdirSync, rmSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { dataFolder } from './project.mjs';
 
@@ -12,7 +12,9 @@ const listFiles = (folder) =>
 /** Lays the uploaded files of a backup into the data folder, next to those that are there. */
 export function addUploads(from) {
   const source = join(from, 'uploads');
-  if (existsSync(source)) cpSync(source, join(dataFolder, 'uploads'), { recursive: true });
+  if (!existsSync(source)) return;
+  mkdirSync(join(dataFolder, 'uploads'), { recursive: true, mode: 0o700 });
+  cpSync(source, join(dataFolder, 'uploads'), { recursive: true });
 }
 
 /** Once the database is in place: takes the backup's secret, and removes uploads that it does not hold. */
