@@ -12,9 +12,10 @@ export type ConfirmChoices = {
 const frame = ({ title, text, act, danger = false }: ConfirmChoices) => ({
   title,
   message: text,
+  'aria-label': title,
   class: 'tw-ask',
   ok: { label: act, unelevated: true, color: danger ? 'negative' : 'primary' },
-  cancel: { label: 'Cancel', flat: true },
+  cancel: { label: 'Cancel', flat: true, color: 'ink' },
 });
 
 /** Asks before an act that can't be undone; the safe answer has the focus. */
@@ -34,6 +35,7 @@ export const askText = (choices: ConfirmChoices & { label: string; value?: strin
         model: choices.value ?? '',
         label: choices.label,
         outlined: true,
+        color: 'primary',
         type: 'textarea',
         isValid: (text: string) => text.trim().length > 0,
       },
