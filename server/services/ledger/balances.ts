@@ -12,13 +12,12 @@ export async function memberBalances(clubId: string, tx?: Tx): Promise<Map<strin
   return new Map(rows.map((row) => [row.member_id, row.balance]));
 }
 
-/** What each member still owes (positive) or has too much (negative) for one buy, in minor units. */
+/** Sum of each member's postings about one buy, in minor units; before the final share what they paid, negative. */
 export async function memberBalancesOfBuy(buyId: string, tx?: Tx): Promise<Map<string, number>> {
   const rows = await select<{ member_id: string; balance: number }>(
     `select a.ref_id as member_id, sum(p.amount_minor)::bigint as balance
-     from ledger_transactions t join ledger_postings p on p.transaction_id = t.id
-     join ledger_accounts a on a.id = p.account_id and a.kind = 'member'
-     where t.buy_id = :buyId group by a.ref_id`,
+     from ledger_postings p join ledger_accounts a on a.id = p.account_id and a.kind = 'member'
+     where p.buy_id = :buyId group by a.ref_id`,
     { buyId },
     tx,
   );

@@ -10,6 +10,8 @@ export interface Posting {
   readonly account: LedgerAccountRef;
   /** Minor units; debit positive, credit negative. What a member owes is a debit on their account. */
   readonly amountMinor: number;
+  /** The buy it concerns, when that isn't the entry's; null for none. */
+  readonly buyId?: string | null;
 }
 
 async function accountId(clubId: string, ref: LedgerAccountRef, tx: Tx): Promise<string> {
@@ -68,10 +70,16 @@ export async function postTransaction(
     tx,
   );
   if (!row) return null;
-  for (const { account, amountMinor } of postings) {
+  for (const { account, amountMinor, buyId = entry.buyId ?? null } of postings) {
     await execute(
-      'insert into ledger_postings (transaction_id, account_id, amount_minor) values (:transactionId, :accountId, :amountMinor)',
-      { transactionId: row.id, accountId: await accountId(entry.clubId, account, tx), amountMinor },
+      `insert into ledger_postings (transaction_id, account_id, amount_minor, buy_id)
+       values (:transactionId, :accountId, :amountMinor, :buyId)`,
+      {
+        transactionId: row.id,
+        accountId: await accountId(entry.clubId, account, tx),
+        amountMinor,
+        buyId,
+      },
       tx,
     );
   }
