@@ -1,4 +1,5 @@
 import { logger } from '../config/logger.ts';
+import { eraseExpiredJob } from './eraseExpired.ts';
 import { sendMail } from './sendMail.ts';
 
 /** Something done again and again; every process runs it, so it must take its own locks in the database. */
@@ -8,7 +9,7 @@ export interface Job {
   run(): Promise<void>;
 }
 
-const jobs: readonly Job[] = [sendMail];
+const jobs: readonly Job[] = [sendMail, eraseExpiredJob];
 
 /** Starts all jobs; the returned function lets running ones finish and starts no more. */
 export async function startJobs(list: readonly Job[] = jobs): Promise<() => Promise<void>> {

@@ -4,7 +4,7 @@ import session from 'express-session';
 import { pool } from '../config/database.ts';
 import { env } from '../config/runtime.ts';
 
-const days = 30;
+const lifeMs = 30 * 86_400_000;
 const PgStore = connectPgSimple(session);
 
 declare module 'express-session' {
@@ -13,11 +13,32 @@ declare module 'express-session' {
   }
 }
 
+/** A store in which a request that was on its way can't bring back a session that was ended meanwhile. */
+class LastingStore extends PgStore {
+  override set(sid: string, data: session.SessionData, done?: (error?: unknown) => void): void {
+    // Signing in writes the row first and names `renewedAt` after: from then on there is only an update.
+    if (data.renewedAt === undefined) {
+      super.set(sid, data, done);
+      return;
+    }
+    pool
+      .query('update session set sess = $2, expire = to_timestamp($3) where sid = $1', [
+        sid,
+        JSON.stringify(data),
+        Math.ceil(new Date(data.cookie.expires ?? Date.now() + lifeMs).getTime() / 1000),
+      ])
+      .then(
+        () => done?.(),
+        (error: unknown) => done?.(error),
+      );
+  }
+}
+
 /** Sessions in PostgreSQL; the cookie is HttpOnly, SameSite=Lax, and Secure behind TLS. */
 export const sessions = session({
   name: 'tarewell.sid',
   secret: env.sessionSecret,
-  store: new PgStore({
+  store: new LastingStore({
     pool,
     tableName: 'session',
     createTableIfMissing: false,
@@ -30,7 +51,7 @@ export const sessions = session({
     httpOnly: true,
     sameSite: 'lax',
     secure: env.behindTls,
-    maxAge: days * 86_400_000,
+    maxAge: lifeMs,
     path: '/',
   },
 });

@@ -3,6 +3,7 @@ import type { SignInBody } from '#shared/schemas/session.ts';
 import { passport } from '../config/passport.ts';
 import { findAccountActor, type AccountActor } from '../services/actors.ts';
 import { DomainProblem } from '../services/problem.ts';
+import { disconnectSession } from '../sockets/publish.ts';
 
 function authenticate(req: Request, body: SignInBody): Promise<Express.User | false> {
   return new Promise((resolve, reject) => {
@@ -38,9 +39,11 @@ export async function signIn(req: Request, body: SignInBody): Promise<AccountAct
   return signInAs(req, user.id);
 }
 
-/** Ends this session, here and in the database. */
+/** Ends this session, here and in the database, with its sockets. */
 export async function signOut(req: Request): Promise<void> {
+  const { sessionID } = req;
   await new Promise<void>((resolve, reject) => {
     req.session.destroy((error?: Error) => (error ? reject(error) : resolve()));
   });
+  disconnectSession(sessionID);
 }

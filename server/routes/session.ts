@@ -1,9 +1,10 @@
 import { Done } from '#shared/schemas/fields.ts';
-import { DemoSignInBody, SessionReply, SignInBody } from '#shared/schemas/session.ts';
+import { DemoPeople, DemoSignInBody, SessionReply, SignInBody } from '#shared/schemas/session.ts';
 import { env } from '../config/runtime.ts';
 import { limit } from '../middlewares/limits.ts';
 import { visitorRoute, type RouteDef } from '../middlewares/route.ts';
 import { findDemoAccount } from '../services/accounts/findDemoAccount.ts';
+import { findDemoPeople } from '../services/accounts/findDemoPeople.ts';
 import { signIn, signInAs, signOut } from '../middlewares/signIn.ts';
 import { readSession } from '../services/accounts/readSession.ts';
 
@@ -56,6 +57,13 @@ export const sessionRoutes: RouteDef[] = [
   }),
   ...(env.demo
     ? [
+        visitorRoute({
+          method: 'get',
+          path: '/session/demo',
+          summary: 'People of the demo club who can be signed in with one click (demo mode only)',
+          reply: DemoPeople,
+          run: async () => ({ people: await findDemoPeople() }),
+        }),
         visitorRoute({
           method: 'post',
           path: '/session/demo',

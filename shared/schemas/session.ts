@@ -31,3 +31,15 @@ export type SignInBody = z.infer<typeof SignInBody>;
 /** One-click demo sign-in; exists only in demo mode. */
 export const DemoSignInBody = z.strictObject({ email: Email });
 export type DemoSignInBody = z.infer<typeof DemoSignInBody>;
+
+/** A person of the demo club whom one click signs in, with their roles there; none: a plain member. */
+export const DemoPerson = z.strictObject({
+  email: z.string(),
+  name: z.string(),
+  clubName: z.string(),
+  roles: z.array(z.enum(['organiser', 'treasurer', 'steward'])),
+});
+export type DemoPerson = z.infer<typeof DemoPerson>;
+
+export const DemoPeople = z.strictObject({ people: z.array(DemoPerson) });
+export type DemoPeople = z.infer<typeof DemoPeople>;
