@@ -3,12 +3,32 @@ import multer from 'multer';
 import { action } from '../middlewares/action.ts';
 import { noSuchRoute } from '../middlewares/problem.ts';
 import type { RouteDef } from '../middlewares/route.ts';
+import { accountsRoutes } from './accounts.ts';
+import { auditRoutes } from './audit.ts';
 import { buysRoutes } from './buys.ts';
+import { clubsRoutes } from './clubs.ts';
+import { invitationsRoutes } from './invitations.ts';
+import { ledgerRoutes } from './ledger.ts';
+import { membersRoutes } from './members.ts';
 import { outboxRoutes } from './outbox.ts';
+import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
+import { suppliersRoutes } from './suppliers.ts';
 
 /** Every route of the API; OpenAPI and the refusal tests read this list. */
-export const allRoutes: readonly RouteDef[] = [...sessionRoutes, ...outboxRoutes, ...buysRoutes];
+export const allRoutes: readonly RouteDef[] = [
+  ...sessionRoutes,
+  ...saltsRoutes,
+  ...suppliersRoutes,
+  ...accountsRoutes,
+  ...clubsRoutes,
+  ...membersRoutes,
+  ...invitationsRoutes,
+  ...auditRoutes,
+  ...outboxRoutes,
+  ...buysRoutes,
+  ...ledgerRoutes,
+];
 
 const upload = multer({
   storage: multer.memoryStorage(),
