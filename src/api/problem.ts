@@ -37,7 +37,7 @@ export const makeOfflineProblem = () =>
     status: 0,
     code: 'offline',
     title: 'No connection',
-    detail: 'Tarewell could not be reached. What you typed is still here. Try again.',
+    detail: 'Tarewell could not be reached. Check your connection and try again.',
   });
 
 const isRecord = (value: unknown): value is Record<string, unknown> =>

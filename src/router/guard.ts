@@ -1,4 +1,5 @@
 import type { RouteLocationNormalized, RouteLocationRaw } from 'vue-router';
+import { readNext } from 'src/composables/readNext.ts';
 
 type Visitor = {
   signedIn: boolean;
@@ -15,10 +16,6 @@ export function homeFor(visitor: Visitor): string | null {
   if (visitor.homeClub) return `/c/${visitor.homeClub.clubSlug}/buys`;
   return visitor.memberships.length > 0 ? null : '/clubs/new';
 }
-
-/** Only a path of this site is followed after sign-in, never another site's address. */
-export const readNext = (next: unknown): string | null =>
-  typeof next === 'string' && /^\/(?![/\\])/.test(next) ? next : null;
 
 /** Lets a visitor through, or says where to go instead. */
 export function decide(to: RouteLocationNormalized, visitor: Visitor): true | RouteLocationRaw {

@@ -11,9 +11,11 @@ export default defineRouter(() => {
 
   router.beforeEach(async (to) => {
     const session = useSessionStore();
-    // Without the server nobody can be told apart: the page opens and says that it is offline.
     if (!session.loaded) await session.load().catch(() => undefined);
-    if (!session.loaded && to.path !== '/') return true;
+    if (!session.loaded) {
+      // Without the server nobody can be told apart: the start page says so and tries again.
+      return to.name === 'home' || { name: 'home', query: { next: to.fullPath } };
+    }
     const decision = decide(to, session);
     if (decision === true) {
       session.enterClub(typeof to.params.club === 'string' ? to.params.club : session.clubSlug);

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { RouteLocationNormalized } from 'vue-router';
-import { decide, homeFor, readNext } from 'src/router/guard.ts';
+import { readNext } from 'src/composables/readNext.ts';
+import { decide, homeFor } from 'src/router/guard.ts';
 
 const fen = { clubSlug: 'fen' };
 const visitor = {
