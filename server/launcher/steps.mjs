@@ -1,8 +1,11 @@
 import { isEnding } from './command.mjs';
 
-/** Prints one line. */
+let isLineOpen = false;
+
+/** Prints one line; in the middle of a step, below the step's. */
 export function say(line) {
-  process.stdout.write(`${line}\n`);
+  process.stdout.write(isLineOpen ? `\n${line}\n` : `${line}\n`);
+  isLineOpen = false;
 }
 
 /** @returns a duration as people read it, such as `0.4 s` or `1 min 12 s` */
@@ -22,13 +25,21 @@ export async function step(what, work) {
   if (isEnding()) await new Promise(() => {});
   const begun = performance.now();
   process.stdout.write(`${what} ... `);
+  isLineOpen = true;
   try {
     const result = await work();
     const outcome = typeof result === 'string' ? result : 'done';
-    say(`${outcome} (${formatDuration(performance.now() - begun)})`);
+    finish(`${outcome} (${formatDuration(performance.now() - begun)})`);
     return result;
   } catch (error) {
-    say(`${isEnding() ? 'stopped' : 'failed'} after ${formatDuration(performance.now() - begun)}`);
+    finish(
+      `${isEnding() ? 'stopped' : 'failed'} after ${formatDuration(performance.now() - begun)}`,
+    );
     throw error;
   }
+}
+
+function finish(outcome) {
+  process.stdout.write(`${outcome}\n`);
+  isLineOpen = false;
 }

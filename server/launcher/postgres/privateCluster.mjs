@@ -1,3 +1,4 @@
+import { randomBytes } from 'node:crypto';
 import { existsSync, readFileSync, renameSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { LauncherProblem } from '../problem.mjs';
@@ -44,35 +45,42 @@ function followMove(dataFolder, record) {
   return { ...record, dataFolder };
 }
 
-async function makeRecord(dataFolder) {
+const folderOf = (dataFolder, record) => record.place ?? join(dataFolder, 'postgres');
+
+// A cluster outside notes whose it is, so that a new folder of the same path takes only what nobody else has.
+const noteOf = (place) => join(place, 'data-folder');
+
+async function choosePlace(dataFolder) {
   const place = placeFor(dataFolder);
-  const inside = place.startsWith(dataFolder);
-  if (existsSync(place)) {
-    if (inside) {
-      throw new LauncherProblem(
-        `${place} holds a database, but ${recordOf(dataFolder)} with its password is missing. ` +
-          'Put that file back, or move the database folder away to begin afresh.',
-      );
-    }
-    await setAside(place);
+  if (!existsSync(place)) return place;
+  if (place.startsWith(dataFolder)) {
+    throw new LauncherProblem(
+      `${place} holds a database, but ${recordOf(dataFolder)} with its password is missing. ` +
+        'Put that file back, or move the database folder away to begin afresh.',
+    );
   }
+  const note = noteOf(place);
+  if (!existsSync(note) || readFileSync(note, 'utf8') !== dataFolder) {
+    return `${place}-${randomBytes(4).toString('hex')}`;
+  }
+  await stopCluster(place);
+  const aside = `${place}.left-${randomBytes(4).toString('hex')}`;
+  renameSync(place, aside);
+  say(`The database that a deleted data folder had left here was set aside as ${aside}.`);
+  return place;
+}
+
+async function makeRecord(dataFolder) {
+  const place = await choosePlace(dataFolder);
   const record = {
     dataFolder,
-    place: inside ? null : place,
+    place: place.startsWith(dataFolder) ? null : place,
     port: null,
     ownerPassword: makePassword(),
     password: makePassword(),
   };
   writeRecord(dataFolder, record);
   return record;
-}
-
-// What a deleted data folder of the same path left under /var/lib.
-async function setAside(place) {
-  await stopCluster(place);
-  const aside = `${place}.left-${new Date().toISOString().replace(/\W/g, '').slice(0, 14)}`;
-  renameSync(place, aside);
-  say(`The database of an earlier, deleted data folder was set aside as ${aside}.`);
 }
 
 async function ensureDatabase(admin, password) {
@@ -90,8 +98,9 @@ async function ensureDatabase(admin, password) {
 export async function startPrivateCluster(dataFolder) {
   const kept = readRecord(dataFolder);
   const record = kept ? followMove(dataFolder, kept) : await makeRecord(dataFolder);
-  const folder = record.place ?? join(dataFolder, 'postgres');
+  const folder = folderOf(dataFolder, record);
   if (!existsSync(folder)) await createCluster(folder, record.ownerPassword);
+  if (record.place) writeFileSync(noteOf(record.place), dataFolder);
   const { port, reused } = await startCluster(folder, {
     port: record.port,
     password: record.ownerPassword,
@@ -111,13 +120,13 @@ export async function startPrivateCluster(dataFolder) {
 /** Stops the PostgreSQL of a data folder, if it runs. */
 export async function stopPrivateCluster(dataFolder) {
   const record = readRecord(dataFolder);
-  if (record) await stopCluster(record.place ?? join(dataFolder, 'postgres'));
+  if (record) await stopCluster(folderOf(dataFolder, record));
 }
 
 /** @returns the superuser's and the application's URL of a cluster that runs now, or null */
 export function findRunningCluster(dataFolder) {
   const record = readRecord(dataFolder);
-  const running = record && findPostmaster(record.place ?? join(dataFolder, 'postgres'));
+  const running = record && findPostmaster(folderOf(dataFolder, record));
   if (!running) return null;
   const { port } = running;
   return {
