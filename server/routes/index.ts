@@ -5,7 +5,9 @@ import { noSuchRoute } from '../middlewares/problem.ts';
 import type { RouteDef } from '../middlewares/route.ts';
 import { accountsRoutes } from './accounts.ts';
 import { auditRoutes } from './audit.ts';
+import { buyPeopleRoutes } from './buyPeople.ts';
 import { buysRoutes } from './buys.ts';
+import { buyTermsRoutes } from './buyTerms.ts';
 import { clubsRoutes } from './clubs.ts';
 import { invitationsRoutes } from './invitations.ts';
 import { ledgerRoutes } from './ledger.ts';
@@ -14,12 +16,14 @@ import { outboxRoutes } from './outbox.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
 import { suppliersRoutes } from './suppliers.ts';
+import { uploadsRoutes } from './uploads.ts';
 
 /** Every route of the API; OpenAPI and the refusal tests read this list. */
 export const allRoutes: readonly RouteDef[] = [
   ...sessionRoutes,
   ...saltsRoutes,
   ...suppliersRoutes,
+  ...uploadsRoutes,
   ...accountsRoutes,
   ...clubsRoutes,
   ...membersRoutes,
@@ -27,13 +31,21 @@ export const allRoutes: readonly RouteDef[] = [
   ...auditRoutes,
   ...outboxRoutes,
   ...buysRoutes,
+  ...buyTermsRoutes,
+  ...buyPeopleRoutes,
   ...ledgerRoutes,
 ];
 
-const upload = multer({
+const readFile = multer({
   storage: multer.memoryStorage(),
   limits: { fileSize: 10 * 1024 * 1024, files: 1, fields: 20 },
 }).single('file');
+
+/** Nobody who isn't signed in makes the server hold a file in memory. */
+const upload: RequestHandler = (req, res, next) => {
+  if (req.user) readFile(req, res, next);
+  else next();
+};
 
 /** Router of /api/v1. */
 export function apiRouter(): Router {
