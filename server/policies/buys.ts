@@ -10,6 +10,9 @@ export const canReadBuy = (_actor: BuyStanding) => true;
 export const canDraftBuy = (actor: ClubStanding) =>
   actor.status === 'active' && actor.roles.organiser;
 
+/** Drafting a new buy after this one. */
+export const canCopyBuy = (actor: BuyStanding) => canDraftBuy(actor);
+
 /** Lines, offers, charges, policies, dates, people, opening and cancelling: the organisers of this buy. */
 export const canOrganiseBuy = (actor: BuyStanding) => actor.buy.organises;
 

@@ -146,7 +146,7 @@ const buyJoins = `left join buy_organisers o on o.buy_id = b.id and o.membership
   left join buy_helpers h on h.buy_id = b.id and h.membership_id = m.id`;
 
 const buyIsSeen =
-  '(b.opened_at is not null or b.responsible_id = m.id or o.membership_id is not null)';
+  '(b.opened_at is not null or m.id in (b.responsible_id, b.offered_to_id) or o.membership_id is not null)';
 
 function asBuyActor(actor: ClubActor, buyId: string, row: BuyRow): BuyActor | null {
   const active = actor.status === 'active';
@@ -170,7 +170,7 @@ function asBuyActor(actor: ClubActor, buyId: string, row: BuyRow): BuyActor | nu
 
 /**
  * The actor before one buy of their club. Null when the buy is not of this club, is a draft or a cancelled draft that
- * the actor does not organise, or when a former member has no part in it.
+ * the actor neither organises nor is asked to take over, or when a former member has no part in it.
  */
 export async function findBuyActor(actor: ClubActor, buyId: string): Promise<BuyActor | null> {
   const { rows } = await pool.query<BuyRow>({

@@ -7,6 +7,7 @@ export const BuyMay = z.strictObject({
   editMeeting: z.boolean(),
   open: z.boolean(),
   discard: z.boolean(),
+  restore: z.boolean(),
   cancel: z.boolean(),
   copy: z.boolean(),
   namePeople: z.boolean(),

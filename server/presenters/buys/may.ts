@@ -8,6 +8,7 @@ export interface MayFacts {
   readonly state: BuyState;
   readonly offeredToId: string | null;
   readonly frozen: boolean;
+  readonly opened: boolean;
 }
 
 const live: readonly BuyState[] = [
@@ -30,8 +31,9 @@ export function mayWithBuy(actor: BuyStanding, facts: MayFacts): BuyMay {
     editMeeting: organises && live.includes(state),
     open: organises && isIn('draft'),
     discard: organises && isIn('draft'),
-    cancel: organises && isIn('draft', 'open', 'locked'),
-    copy: buys.canDraftBuy(actor),
+    cancel: organises && isIn('open', 'locked'),
+    restore: organises && isIn('cancelled') && !facts.opened,
+    copy: buys.canCopyBuy(actor),
     namePeople: organises && live.includes(state),
     offerResponsibility: buys.canOfferResponsibility(actor) && live.includes(state),
     answerResponsibility:

@@ -1,21 +1,23 @@
 import { nextStep } from '#shared/domain/buys/nextStep.ts';
+import { hasReached } from '#shared/domain/buys/states.ts';
 import type { BuyHeader, BuyHelper, BuyPerson } from '#shared/schemas/buys.ts';
 import type { BuyStanding } from '../../policies/actor.ts';
 import { mayWithBuy } from './may.ts';
 import { instant } from './presentBuySummary.ts';
-import { nextFacts, type BuyFactsRow } from './rows.ts';
+import { nextFacts, type BuyFactsRow, type BuyMoney } from './rows.ts';
 
 export interface BuyPeopleAndChanges {
   coOrganisers: BuyPerson[];
   helpers: BuyHelper[];
   changes: { terms_version: number; summary: string; at: Date; by: string | null }[];
   now: Date;
+  money: BuyMoney;
 }
 
 /** A buy's head from this viewer's side. */
 export function presentBuyHeader(
   row: BuyFactsRow,
-  { coOrganisers, helpers, changes, now }: BuyPeopleAndChanges,
+  { coOrganisers, helpers, changes, now, money }: BuyPeopleAndChanges,
   actor: BuyStanding,
 ): BuyHeader {
   const { organises, helps, takesCash, takesPart } = actor.buy;
@@ -75,7 +77,7 @@ export function presentBuyHeader(
       takesCash,
       takesPart,
       wantedMg: row.mine_mg,
-      owedMinor: row.my_owed,
+      owedMinor: hasReached(row.state, 'locked') ? money.myOpenMinor : null,
     },
     changes: changes.map((change) => ({
       termsVersion: change.terms_version,
@@ -83,8 +85,13 @@ export function presentBuyHeader(
       at: change.at.toISOString(),
       by: change.by,
     })),
-    may: mayWithBuy(actor, { state: row.state, offeredToId: row.offered_to_id, frozen }),
-    next: nextStep(nextFacts(row, { organises, helps, treasurer: actor.roles.treasurer })),
+    may: mayWithBuy(actor, {
+      state: row.state,
+      offeredToId: row.offered_to_id,
+      frozen,
+      opened: row.opened_at !== null,
+    }),
+    next: nextStep(nextFacts(row, money, { organises, helps, treasurer: actor.roles.treasurer })),
     now: now.toISOString(),
   };
 }

@@ -1,13 +1,17 @@
 import { nextStep } from '#shared/domain/buys/nextStep.ts';
 import type { BuySummary } from '#shared/schemas/buys.ts';
 import type { ClubStanding } from '../../policies/actor.ts';
-import { nextFacts, type BuyFactsRow } from './rows.ts';
+import { nextFacts, type BuyFactsRow, type BuyMoney } from './rows.ts';
 
 /** An instant as the wire has it. */
 export const instant = (at: Date | null): string | null => at?.toISOString() ?? null;
 
 /** One buy of the list, from this viewer's side. */
-export function presentBuySummary(row: BuyFactsRow, actor: ClubStanding): BuySummary {
+export function presentBuySummary(
+  row: BuyFactsRow,
+  money: BuyMoney,
+  actor: ClubStanding,
+): BuySummary {
   return {
     id: row.id,
     name: row.name,
@@ -24,7 +28,7 @@ export function presentBuySummary(row: BuyFactsRow, actor: ClubStanding): BuySum
     mineMg: row.mine_mg,
     organises: row.organises,
     next: nextStep(
-      nextFacts(row, {
+      nextFacts(row, money, {
         organises: row.organises,
         helps: false,
         treasurer: actor.roles.treasurer,

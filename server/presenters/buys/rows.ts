@@ -51,39 +51,46 @@ export interface BuyFactsRow {
   pledged_mg: number;
   mine_mg: number;
   organises: boolean;
-  unpaid: number;
   over_limit: number;
-  my_owed: number | null;
   must_agree: boolean | null;
   collected: boolean | null;
-  refunds_waiting: number;
+  /** Who need not pay before the orders: vouched for, or dropped. */
+  vouched_for: string[];
   unconfirmed_bills: number;
   portions: number;
   portions_done: number;
   shares_waiting: number;
 }
 
+/** What the books say of a buy, for those who may know: who still owes, what the viewer owes, who gets money back. */
+export interface BuyMoney {
+  readonly unpaid: number;
+  readonly myOpenMinor: number;
+  readonly refundsWaiting: number;
+}
+
 /** The facts as `nextStep` takes them, for one viewer. */
 export function nextFacts(
   row: BuyFactsRow,
+  money: BuyMoney,
   viewer: { organises: boolean; helps: boolean; treasurer: boolean },
 ): NextFacts {
   return {
     state: row.state,
     frozen: row.state === 'open' && row.frozen_at !== null,
     lines: row.lines,
-    unpaid: row.unpaid,
+    unpaid: money.unpaid,
     overLimit: row.over_limit,
     unconfirmedBills: row.unconfirmed_bills,
     targetsMade: row.target_version > 0,
     portions: row.portions,
     portionsDone: row.portions_done,
     sharesWaiting: row.shares_waiting,
-    refundsWaiting: row.refunds_waiting,
+    refundsWaiting: money.refundsWaiting,
     viewer: {
       ...viewer,
       pledged: row.mine_mg > 0,
-      owes: (row.my_owed ?? 0) > 0,
+      owes: money.myOpenMinor > 0,
       mustAgree: row.must_agree ?? false,
       collected: row.collected ?? false,
     },

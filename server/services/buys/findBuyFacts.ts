@@ -7,11 +7,7 @@ const columns = `b.*, r.display_name as responsible_name, ot.display_name as off
   p.members, p.pledged_mg, p.mine_mg,
   (b.responsible_id = :me or exists (
     select 1 from buy_organisers o where o.buy_id = b.id and o.membership_id = :me)) as organises,
-  m.unpaid, m.over_limit, m.my_owed, m.must_agree, m.collected,
-  (select count(*)::int from (
-    select a.ref_id from ledger_transactions t join ledger_postings lp on lp.transaction_id = t.id
-      join ledger_accounts a on a.id = lp.account_id and a.kind = 'member'
-    where t.buy_id = b.id and b.state = 'cancelled' group by a.ref_id having sum(lp.amount_minor) < 0) w) as refunds_waiting,
+  m.over_limit, m.must_agree, m.collected, m.vouched_for,
   (select count(*)::int from bills x where x.buy_id = b.id and x.confirmed_at is null and x.voided_at is null) as unconfirmed_bills,
   s.portions, s.portions_done, s.shares_waiting`;
 
@@ -25,19 +21,12 @@ const joins = `from buys b
       coalesce(sum(wanted_mg) filter (where membership_id = :me), 0)::bigint as mine_mg
     from pledges where buy_id = b.id and dropped_at is null and (wanted_mg > 0 or up_to_mg > 0)) p
   cross join lateral (
-    select count(*) filter (where owed > 0 and vouched_at is null)::int as unpaid,
-      count(*) filter (where over_limit_minor > 0 and agreed_at is null)::int as over_limit,
-      max(owed) filter (where membership_id = :me)::bigint as my_owed,
+    select count(*) filter (where over_limit_minor > 0 and agreed_at is null)::int as over_limit,
       bool_or(over_limit_minor > 0 and agreed_at is null) filter (where membership_id = :me) as must_agree,
-      bool_or(collected_at is not null) filter (where membership_id = :me) as collected
-    from (
-      select bm.*, case when b.state = 'cancelled' then 0 else
-        (case when bm.final_minor is null then coalesce(bm.due_minor, 0) else 0 end) + coalesce((
-          select sum(lp.amount_minor) from ledger_accounts a
-            join ledger_postings lp on lp.account_id = a.id
-            join ledger_transactions t on t.id = lp.transaction_id and t.buy_id = b.id
-          where a.club_id = b.club_id and a.kind = 'member' and a.ref_id = bm.membership_id), 0) end as owed
-      from buy_members bm where bm.buy_id = b.id and bm.dropped_at is null) x) m
+      bool_or(collected_at is not null) filter (where membership_id = :me) as collected,
+      array(select bm.membership_id::text from buy_members bm where bm.buy_id = b.id
+        and (bm.vouched_at is not null or bm.dropped_at is not null)) as vouched_for
+    from buy_members where buy_id = b.id and dropped_at is null) m
   cross join lateral (
     select count(*)::int as portions, count(*) filter (where state = 'done')::int as portions_done,
       count(distinct membership_id) filter (where handed_over_at is null)::int as shares_waiting
@@ -53,7 +42,7 @@ export async function findBuyFacts(
   return select<BuyFactsRow>(
     `select ${columns} ${joins}
      where b.club_id = :clubId ${buyId ? 'and b.id = :buyId' : ''}
-       and (b.opened_at is not null or b.responsible_id = :me
+       and (b.opened_at is not null or b.responsible_id = :me or b.offered_to_id = :me
          or exists (select 1 from buy_organisers o where o.buy_id = b.id and o.membership_id = :me))
      order by b.created_at desc, b.id`,
     { clubId, me: membershipId, ...(buyId ? { buyId } : {}) },
