@@ -114,5 +114,5 @@ export function pricePacks(request: PackRequest, packs: Record<string, number>):
 
 /** Minor units per gram, for display only; 0 when nothing is bought. */
 export function perGram(costMinor: number, mg: number): number {
-  return mg === 0 ? 0 : (costMinor / mg) * 1000;
+  return mg === 0 ? 0 : (costMinor * 1000) / mg;
 }
