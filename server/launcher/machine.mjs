@@ -37,11 +37,15 @@ export async function ensureDebianPackages(names) {
     );
   }
   await step(`Installing Debian packages: ${wanted}`, async () => {
-    const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
+    // In a group of its own: stopped halfway, it would leave the machine's packages half configured.
+    const options = {
+      env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive' },
+      detached: true,
+    };
     // A list that can't be refreshed is no reason to stop: the packages may be known already.
-    const update = await run('apt-get', ['-q', 'update'], { env });
+    const update = await run('apt-get', ['-q', 'update'], options);
     const install = ['-q', 'install', '-y', '--no-install-recommends', ...missing];
-    const { code, output } = await run('apt-get', install, { env });
+    const { code, output } = await run('apt-get', install, options);
     if (code !== 0 || missing.some((name) => !isThere[name]())) {
       const log = lastLines(update.code === 0 ? output : `${update.output}\n${output}`);
       throw new LauncherProblem(`apt-get could not install ${wanted}:\n${log}`);

@@ -120,11 +120,16 @@ const running = new Map();
 
 /** Ends the programs that `run` waits for, and waits too; those in a group of their own finish by themselves. */
 export async function endRunning() {
-  for (const [child, { detached }] of running) if (!detached) child.kill('SIGTERM');
+  const signalAll = (signal) => {
+    for (const [child, { detached }] of running) if (!detached) child.kill(signal);
+  };
+  signalAll('SIGTERM');
+  const insist = setTimeout(() => signalAll('SIGKILL'), 2000);
   await Promise.race([
     Promise.all([...running.values()].map(({ closed }) => closed)),
     pause(15_000),
   ]);
+  clearTimeout(insist);
 }
 
 /**
