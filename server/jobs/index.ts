@@ -1,4 +1,5 @@
 import { logger } from '../config/logger.ts';
+import { closingJob, closingSoonJob, planJob } from './closing.ts';
 import { eraseExpiredJob } from './eraseExpired.ts';
 import { sendMail } from './sendMail.ts';
 
@@ -9,7 +10,7 @@ export interface Job {
   run(): Promise<void>;
 }
 
-const jobs: readonly Job[] = [sendMail, eraseExpiredJob];
+const jobs: readonly Job[] = [sendMail, eraseExpiredJob, closingJob, closingSoonJob, planJob];
 
 /** Starts all jobs; the returned function lets running ones finish and starts no more. */
 export async function startJobs(list: readonly Job[] = jobs): Promise<() => Promise<void>> {

@@ -15,6 +15,7 @@ import { membersRoutes } from './members.ts';
 import { outboxRoutes } from './outbox.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
+import { sheetRoutes } from './sheet.ts';
 import { suppliersRoutes } from './suppliers.ts';
 import { uploadsRoutes } from './uploads.ts';
 
@@ -33,6 +34,7 @@ export const allRoutes: readonly RouteDef[] = [
   ...buysRoutes,
   ...buyTermsRoutes,
   ...buyPeopleRoutes,
+  ...sheetRoutes,
   ...ledgerRoutes,
 ];
 

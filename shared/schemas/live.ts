@@ -22,7 +22,8 @@ export type BuyLookers = z.infer<typeof BuyLookers>;
 
 /**
  * Something on the sheet changed. `pledge`: one pledge, with its person, or only the line's new total where the club
- * shows no more (whoever may see more asks for the changes). `terms`: read the sheet again. `state`: the buy moved on.
+ * shows no more (whoever may see more asks for the changes). `pledges`: several, ask for them. `terms`: read the
+ * sheet again. `state`: the buy moved on.
  */
 export const BuyChanged = z.discriminatedUnion('kind', [
   z.strictObject({
@@ -32,7 +33,7 @@ export const BuyChanged = z.discriminatedUnion('kind', [
     pledge: PledgeChange.nullable(),
     total: LineTotal.nullable(),
   }),
-  z.strictObject({ kind: z.literal('terms'), buyId: Id, sheetVersion: Version }),
+  z.strictObject({ kind: z.enum(['pledges', 'terms']), buyId: Id, sheetVersion: Version }),
   z.strictObject({
     kind: z.literal('state'),
     buyId: Id,

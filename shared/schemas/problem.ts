@@ -25,6 +25,7 @@ export const problemCodes = [
   'not_a_line',
   'plan_infeasible',
   'minimum_unmet',
+  'shelf_limit',
   'price_limit',
   'unpaid',
   'bill_unconfirmed',

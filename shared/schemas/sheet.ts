@@ -286,6 +286,10 @@ export type PledgeReply = z.infer<typeof PledgeReply>;
 export const ConfirmHazardBody = z.strictObject({ saltId: z.string().min(1).max(80) });
 export type ConfirmHazardBody = z.infer<typeof ConfirmHazardBody>;
 
+/** An organiser's tick that a guest signed on paper for a classified salt. */
+export const OnPaperBody = ConfirmHazardBody.extend({ signed: z.boolean() });
+export type OnPaperBody = z.infer<typeof OnPaperBody>;
+
 export const ProposalAnswer = z.strictObject({ accept: z.boolean() });
 export type ProposalAnswer = z.infer<typeof ProposalAnswer>;
 
@@ -299,9 +303,11 @@ export const ReopenBody = z.strictObject({
 });
 export type ReopenBody = z.infer<typeof ReopenBody>;
 
+/** A later closing time, a lower minimum, or both. */
 export const ExtendBody = z.strictObject({
   termsVersion: Version,
-  closesAt: Instant,
+  /** Null: the closing time stays; a buy past it closes again at once. */
+  closesAt: Instant.nullable(),
   minimum: z
     .strictObject({ kind: z.enum(['none', 'mass', 'value', 'members']), amount: z.int().min(0) })
     .optional(),
