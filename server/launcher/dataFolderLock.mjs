@@ -23,7 +23,7 @@ const isClosing = (holder) => Boolean(holder.npm) && !isSameProcess(holder.npm);
 /**
  * Claims the data folder for this command until it ends. What a killed predecessor left running is ended first.
  * @param command as it is typed, for whoever comes second
- * @returns the lock, to note the server's process in
+ * @returns the lock, to note `children` in, as `identify` gives them
  */
 export async function claimDataFolder(folder, command) {
   makeDataFolder(folder);
@@ -33,7 +33,7 @@ export async function claimDataFolder(folder, command) {
     const { lock, left, holder } = await takeLock(lockOf(folder), facts);
     if (lock) {
       onEnd(() => lock.release());
-      await endLeftServer(left);
+      await endLeft(left?.children);
       return lock;
     }
     if (!isClosing(holder) || Date.now() > deadline) throw inUse(folder, holder);
@@ -41,10 +41,11 @@ export async function claimDataFolder(folder, command) {
   }
 }
 
-async function endLeftServer(left) {
-  if (!left?.server || !isStillThere(left.server)) return;
-  await endProcess(left.server);
-  say(`Ended the server that an earlier start had left running (process ${left.server.pid}).`);
+async function endLeft(children = []) {
+  for (const child of children.filter(isStillThere)) {
+    await endProcess(child);
+    say(`Ended what an earlier start had left running (process ${child.pid}).`);
+  }
 }
 
 function inUse(folder, { doing, pid, url }) {

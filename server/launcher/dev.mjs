@@ -3,7 +3,7 @@ import { spawn } from 'node:child_process';
 import { onEnd, runCommand } from './command.mjs';
 import { openDatabase } from './applicationDatabase.mjs';
 import { findFreePortFrom } from './ports.mjs';
-import { endGroup, exitCode } from './processes.mjs';
+import { endGroup, exitCode, identify } from './processes.mjs';
 import { dataFolder, inProject, projectFolder } from './project.mjs';
 import { host } from './serverProcess.mjs';
 import { setUp } from './setUp.mjs';
@@ -16,11 +16,13 @@ function startInGroup(args, env, stopSignal) {
     env: { ...process.env, NODE_ENV: 'development', ...env },
   });
   onEnd(() => endGroup(child, { signal: stopSignal, patienceMs: 5000 }));
-  return exitCode(child);
+  return child;
 }
 
 await runCommand(async () => {
-  const { url } = await openDatabase('npm run dev', (debian) => setUp({ debian, build: false }));
+  const { url, lock } = await openDatabase('npm run dev', (debian) =>
+    setUp({ debian, build: false }),
+  );
   const clientPort = Number(process.env.PORT) || (await findFreePortFrom(4680, host));
   const serverPort = await findFreePortFrom(clientPort + 1, host);
   const server = startInGroup(
@@ -44,5 +46,6 @@ await runCommand(async () => {
     // It does not end on SIGTERM.
     'SIGINT',
   );
-  return Promise.race([server, client]);
+  lock?.note({ children: [server, client].map(({ pid }) => identify(pid)) });
+  return Promise.race([exitCode(server), exitCode(client)]);
 });

@@ -16,7 +16,7 @@ await runCommand(async () => {
     PORT: String(port),
     TAREWELL_DATA: dataFolder,
   });
-  lock?.note({ server: identify(server.pid), url: `http://${host}:${port}` });
+  lock?.note({ children: [identify(server.pid)], url: `http://${host}:${port}` });
   const code = await exitCode(server);
   if (!isEnding()) say(`The server ended by itself (code ${code}).`);
   return code || 1;
