@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { buyStates } from '../domain/buys/states.ts';
 import { Id, Version } from './fields.ts';
 import { LineTotal, PledgeChange, SheetPlan } from './sheet.ts';
+import type { SplitChange } from './splits.ts';
 
 /** What a client asks of the server over the socket; every ask is answered. */
 export const JoinBuy = z.strictObject({ club: z.string(), buy: Id });
@@ -58,6 +59,6 @@ export interface ServerEvents {
   'buy:changed': (change: BuyChanged) => void;
   'buy:plan': (plan: BuyPlan) => void;
   'buy:lookers': (lookers: BuyLookers) => void;
-  'split:changed': (change: unknown) => void;
+  'split:changed': (change: SplitChange) => void;
   'notices:new': (notice: { clubSlug: string }) => void;
 }
