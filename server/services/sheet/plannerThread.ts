@@ -14,9 +14,7 @@ class PlannerThread {
   readonly #waiting = new Map<number, Waiting>();
 
   #start(): Worker {
-    const worker = new Worker(new URL('./planWorker.ts', import.meta.url), {
-      execArgv: ['--import', import.meta.resolve('tsx')],
-    });
+    const worker = new Worker(new URL('./planThread.mjs', import.meta.url), { execArgv: [] });
     worker.on('message', (answer: PlanAnswer) => {
       const waiting = this.#waiting.get(answer.id);
       this.#waiting.delete(answer.id);

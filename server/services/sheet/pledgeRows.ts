@@ -97,7 +97,7 @@ export async function writePledge(
        update buys set sheet_version = sheet_version + 1, updated_at = now() where id = $1 returning sheet_version),
      audit as (
        insert into audit_entries (club_id, buy_id, actor_id, actor_name, action, subject_type, subject_id, before, after, request_id)
-       values ($2, $1, $8, $9, 'pledges.change', 'pledge', $3::text || ':' || $4::text, $10, $11, $12))
+       values ($2, $1, $8, $9, 'pledges.change', 'pledge', $3::uuid || ':' || $4::uuid, $10, $11, $12))
      insert into pledges as p (buy_id, line_id, membership_id, wanted_mg, up_to_mg, at, changed_sheet_version)
      select $1, $3, $4, $5, $6, clock_timestamp(), sheet_version from sheet
      on conflict (line_id, membership_id) do update set wanted_mg = excluded.wanted_mg, up_to_mg = excluded.up_to_mg,
