@@ -12,6 +12,8 @@ import { clubsRoutes } from './clubs.ts';
 import { invitationsRoutes } from './invitations.ts';
 import { ledgerRoutes } from './ledger.ts';
 import { membersRoutes } from './members.ts';
+import { offerImportRoutes } from './offerImport.ts';
+import { noticesRoutes } from './notices.ts';
 import { outboxRoutes } from './outbox.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
@@ -23,6 +25,7 @@ import { uploadsRoutes } from './uploads.ts';
 export const allRoutes: readonly RouteDef[] = [
   ...sessionRoutes,
   ...saltsRoutes,
+  ...offerImportRoutes,
   ...suppliersRoutes,
   ...uploadsRoutes,
   ...accountsRoutes,
@@ -31,6 +34,7 @@ export const allRoutes: readonly RouteDef[] = [
   ...invitationsRoutes,
   ...auditRoutes,
   ...outboxRoutes,
+  ...noticesRoutes,
   ...buysRoutes,
   ...buyTermsRoutes,
   ...buyPeopleRoutes,

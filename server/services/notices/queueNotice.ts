@@ -1,51 +1,8 @@
+import { mayTurnOff, type NoticeKind } from '#shared/schemas/notices.ts';
 import { select, execute, type Tx } from '../../config/database.ts';
 import { logger } from '../../config/logger.ts';
 import { renderNotice, type NoticeContent } from '../../mail/renderNotice.ts';
 import { messageId } from '../../mail/messageId.ts';
-
-/** What notices are about. Those in `always` concern money or pickup and can't be turned off. */
-export const noticeKinds = [
-  'invitation',
-  'buy_opened',
-  'terms_changed',
-  'closing_soon',
-  'locked',
-  'reopened',
-  'cancelled',
-  'payment_received',
-  'ordered',
-  'arrived',
-  'split_day',
-  'pickup',
-  'final_share',
-  'reminder',
-  'unclaimed',
-  'statement',
-  'pledge_changed',
-  'handed_on',
-  'role_changed',
-  'account',
-] as const;
-export type NoticeKind = (typeof noticeKinds)[number];
-
-const always = new Set<NoticeKind>([
-  'invitation',
-  'locked',
-  'reopened',
-  'cancelled',
-  'payment_received',
-  'pickup',
-  'final_share',
-  'reminder',
-  'unclaimed',
-  'statement',
-  'account',
-]);
-
-/** Whether a member may turn notices of this kind off. */
-export function mayTurnOff(kind: NoticeKind): boolean {
-  return !always.has(kind);
-}
 
 export interface Attachment {
   readonly fileName: string;
