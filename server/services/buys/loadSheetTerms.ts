@@ -45,7 +45,7 @@ const offerRows = `lines l
 
 /** Columns of TermsRow, for `from buys b join clubs c on c.id = b.club_id`. */
 export const termsColumns = `b.id, b.club_id, c.currency, b.terms_version, b.state, b.closes_at, b.frozen_until,
-  b.lowering_freeze_hours, b.minimum_kind, b.minimum_amount, b.left_over_payer, b.shelf_limit_minor,
+  case when b.reopen_reason is null then b.lowering_freeze_hours else 0 end as lowering_freeze_hours, b.minimum_kind, b.minimum_amount, b.left_over_payer, b.shelf_limit_minor,
   b.spread_max_permille, c.hide_reportable_grams,
   (select json_agg(json_build_object('id', l.id, 'saltId', l.salt_id, 'stepMg', l.step_mg,
       'reservePermyriad', l.reserve_permyriad, 'surplus', l.surplus, 'shortage', l.shortage, 'note', l.note,

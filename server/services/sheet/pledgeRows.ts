@@ -10,6 +10,7 @@ export interface LockedBuy {
   readonly state: BuyState;
   readonly closes_at: Date | null;
   readonly frozen_at: Date | null;
+  /** 0 after a reopening, when everyone may withdraw free. */
   readonly lowering_freeze_hours: number;
 }
 
@@ -18,7 +19,9 @@ export async function lockForPledge(buyId: string, tx: Tx): Promise<LockedBuy | 
   const [buy] = await prepared<LockedBuy>(
     tx,
     'pledge-lock',
-    `select id, club_id, name, state, closes_at, frozen_at, lowering_freeze_hours from buys where id = $1 for update`,
+    `select id, club_id, name, state, closes_at, frozen_at,
+       case when reopen_reason is null then lowering_freeze_hours else 0 end as lowering_freeze_hours
+     from buys where id = $1 for update`,
     [buyId],
   );
   return buy;

@@ -16,7 +16,7 @@ async function tell(buy: Buy, closesAt: Date, tx: Tx): Promise<void> {
   );
   const pledged = new Set(members.filter((member) => member.pledged).map(({ id }) => id));
   const lowering =
-    buy.loweringFreezeHours > 0
+    buy.loweringFreezeHours > 0 && buy.reopenReason === null
       ? [`In its last ${buy.loweringFreezeHours} hours only the organiser lowers a pledge.`]
       : [];
   await queueNotice(tx, {
