@@ -1,5 +1,5 @@
 import type { Offer as OfferReply, OfferBody } from '#shared/schemas/suppliers.ts';
-import { execute, transact, type Tx } from '../../config/database.ts';
+import { execute, select, transact, type Tx } from '../../config/database.ts';
 import { Offer } from '../../models/Offer.ts';
 import type { Supplier } from '../../models/Supplier.ts';
 import { offerFields } from '../../presenters/suppliers.ts';
@@ -11,19 +11,24 @@ import { invalid, notFound, stale, wrongState } from '../problem.ts';
 import { findSalt } from '../salts/saltsOfClub.ts';
 import { lockSellingSupplier } from './changeSupplier.ts';
 import { describeOfferChange } from './offerWords.ts';
-import { getOffer, listOffers } from './readSuppliers.ts';
-
-const sameOffer = (a: OfferBody, b: OfferBody) =>
-  a.saltId === b.saltId && a.packMg === b.packMg && a.label.toLowerCase() === b.label.toLowerCase();
+import { getOffer } from './readSuppliers.ts';
 
 /**
  * Refuses a second offer of the same salt, pack and label at a supplier whose row is locked.
  * @throws DomainProblem 422 at `label`
  */
 async function refuseTwice(supplier: Supplier, body: OfferBody, self: string | null, tx: Tx) {
-  const others = await listOffers(supplier.clubId, supplier.id, tx);
-  const twin = others.find(
-    (offer) => offer.id !== self && offer.archivedAt === null && sameOffer(offer, body),
+  const [twin] = await select<{ id: string }>(
+    `select id from offers where supplier_id = :supplierId and archived_at is null and salt_id = :saltId
+       and pack_mg = :packMg and lower(label) = lower(:label) and id is distinct from :self limit 1`,
+    {
+      supplierId: supplier.id,
+      saltId: body.saltId,
+      packMg: body.packMg,
+      label: body.label,
+      self,
+    },
+    tx,
   );
   if (!twin) return;
   throw invalid({

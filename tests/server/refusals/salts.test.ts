@@ -13,20 +13,20 @@ describeRights('salts', (route) => /^\/clubs\/:club\/salts/.test(route.path), {
   [`PUT ${path}/salts/:salt/hidden`]: ['steward'],
 });
 
-describeRights(
-  'suppliers',
-  (route) => /^\/clubs\/:club\/suppliers/.test(route.path) && !route.path.includes('import'),
-  {
-    [`GET ${path}/suppliers`]: 'everyone',
-    [`POST ${path}/suppliers`]: editors,
-    [`GET ${path}/suppliers/:supplier`]: 'everyone',
-    [`PUT ${path}/suppliers/:supplier`]: editors,
-    [`POST ${path}/suppliers/:supplier/archive`]: editors,
-    [`POST ${path}/suppliers/:supplier/restore`]: editors,
-    [`POST ${path}/suppliers/:supplier/offers`]: editors,
-    [`PUT ${offer}`]: editors,
-    [`POST ${offer}/archive`]: editors,
-    [`POST ${offer}/restore`]: editors,
-    [`GET ${offer}/prices`]: 'everyone',
-  },
-);
+describeRights('suppliers', (route) => route.path.startsWith('/clubs/:club/suppliers'), {
+  [`GET ${path}/suppliers`]: 'everyone',
+  [`POST ${path}/suppliers`]: editors,
+  [`GET ${path}/suppliers/:supplier`]: 'everyone',
+  [`PUT ${path}/suppliers/:supplier`]: editors,
+  [`POST ${path}/suppliers/:supplier/archive`]: editors,
+  [`POST ${path}/suppliers/:supplier/restore`]: editors,
+  [`POST ${path}/suppliers/:supplier/offers`]: editors,
+  [`PUT ${offer}`]: editors,
+  [`POST ${offer}/archive`]: editors,
+  [`POST ${offer}/restore`]: editors,
+  [`GET ${offer}/prices`]: 'everyone',
+  [`GET ${path}/suppliers/import-template.csv`]: 'everyone',
+  [`GET ${path}/suppliers/:supplier/offers.csv`]: 'everyone',
+  [`POST ${path}/suppliers/:supplier/import/preview`]: editors,
+  [`POST ${path}/suppliers/:supplier/import`]: editors,
+});
