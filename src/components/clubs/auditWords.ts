@@ -1,0 +1,80 @@
+import type { Format } from 'src/composables/useFormat.ts';
+
+const acts: Record<string, string> = {
+  'clubs.found': 'founded the club',
+  'clubs.settings': 'changed the settings',
+  'clubs.invite': 'invited',
+  'clubs.invitation_resend': 'sent an invitation again',
+  'clubs.invitation_revoke': 'revoked an invitation',
+  'clubs.ask_to_join': 'asked to join',
+  'clubs.join': 'joined',
+  'clubs.approve': 'let in',
+  'clubs.refuse': 'turned down',
+  'clubs.remove': 'removed',
+  'clubs.leave': 'left',
+  'clubs.roles': 'changed the roles of',
+  'clubs.rename': 'changed their name',
+  'clubs.guest_add': 'added the guest',
+  'clubs.guest_change': 'changed the guest',
+  'buys.withdraw': 'withdrew a pledge of',
+};
+
+/** Acts that are about the person who does them: their name isn't said twice. */
+const ofOneself = new Set(['clubs.join', 'clubs.ask_to_join', 'clubs.leave', 'clubs.rename']);
+
+const spaced = (name: string) =>
+  name
+    .replace(/([a-z0-9])([A-Z])/g, '$1 $2')
+    .replace(/[_.]/g, ' ')
+    .toLowerCase();
+
+/** 'changed the roles of'; an act without words of its own is spelt out: 'buys: lock'. */
+export function sayAct(action: string): string {
+  const [feature, verb] = action.split('.');
+  return acts[action] ?? (verb ? `${spaced(feature ?? '')}: ${spaced(verb)}` : spaced(action));
+}
+
+/** Whether the subject's name follows the act. */
+export const namesSubject = (action: string) => !ofOneself.has(action);
+
+/** 'Wanted', 'Closes at': the key without its unit. */
+export function sayKey(key: string): string {
+  const words = spaced(key.replace(/(Mg|Minor|Ppm|Id)$/, ''));
+  return words.charAt(0).toUpperCase() + words.slice(1);
+}
+
+const isInstant = (value: string) => /^\d{4}-\d\d-\d\dT[\d:.]+Z$/.test(value);
+
+/** A value as a person reads it, by its type and by the unit that its key carries. */
+export function sayValue(key: string, value: unknown, format: Format): string {
+  if (value === null || value === undefined || value === '') return '–';
+  if (typeof value === 'boolean') return value ? 'yes' : 'no';
+  if (typeof value === 'number') {
+    if (key.endsWith('Mg')) return format.mass(value);
+    if (key.endsWith('Minor')) return format.money(value);
+    if (key.endsWith('Permille')) return format.percent(value);
+    return String(value);
+  }
+  if (typeof value === 'string') return isInstant(value) ? format.dateTime(value) : value;
+  if (Array.isArray(value)) return value.map((one) => sayValue(key, one, format)).join(', ') || '–';
+  return Object.entries(value as Record<string, unknown>)
+    .map(([inner, one]) => `${sayKey(inner)}: ${sayValue(inner, one, format)}`)
+    .join(', ');
+}
+
+export type AuditChange = { key: string; label: string; before: string; after: string };
+
+type Content = Record<string, unknown> | null;
+
+/** What an entry changed, key by key; ids that only the program reads are left out. */
+export function listChanges(before: Content, after: Content, format: Format): AuditChange[] {
+  const keys = new Set([...Object.keys(before ?? {}), ...Object.keys(after ?? {})]);
+  return [...keys]
+    .filter((key) => !/(^id|Id)$/.test(key))
+    .map((key) => ({
+      key,
+      label: sayKey(key),
+      before: before && key in before ? sayValue(key, before[key], format) : '',
+      after: after && key in after ? sayValue(key, after[key], format) : '',
+    }));
+}
