@@ -1,7 +1,16 @@
 import type { BuyHeader, BuyList } from '#shared/schemas/buys.ts';
 import { defineStore } from 'pinia';
 import { ref } from 'vue';
-import { getBuy, getBuys } from 'src/api/buys.ts';
+import {
+  deleteDraft,
+  getBuy,
+  getBuys,
+  postBuy,
+  postCancel,
+  postCopy,
+  postOpen,
+  postRestore,
+} from 'src/api/buys.ts';
 import { joinRoom } from 'src/api/socket.ts';
 
 const PAUSE_MS = 250;
@@ -70,5 +79,38 @@ export const useBuysStore = defineStore('buys', () => {
     };
   }
 
-  return { lists, heads, headOf, listOf, receive, loadList, load, reloadSoon, hear, enter };
+  async function take(act: Promise<BuyHeader>): Promise<BuyHeader> {
+    const head = await act;
+    receive(head);
+    return head;
+  }
+
+  const create = (club: string) => take(postBuy(club, {}));
+  const copy = (club: string, buy: string) => take(postCopy(club, buy));
+  const open = (club: string, buy: string, termsVersion: number) =>
+    take(postOpen(club, buy, termsVersion));
+  const cancel = (club: string, buy: string, body: { termsVersion: number; reason: string }) =>
+    take(postCancel(club, buy, body));
+  const discard = (club: string, buy: string, termsVersion: number) =>
+    take(deleteDraft(club, buy, termsVersion));
+  const restore = (club: string, buy: string) => take(postRestore(club, buy));
+
+  return {
+    create,
+    copy,
+    open,
+    cancel,
+    discard,
+    restore,
+    lists,
+    heads,
+    headOf,
+    listOf,
+    receive,
+    loadList,
+    load,
+    reloadSoon,
+    hear,
+    enter,
+  };
 });

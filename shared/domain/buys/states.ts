@@ -16,3 +16,16 @@ export type BuyState = (typeof buyStates)[number];
 export function hasReached(state: BuyState, reached: BuyState): boolean {
   return state !== 'cancelled' && buyStates.indexOf(state) >= buyStates.indexOf(reached);
 }
+
+/** A state as people say it. */
+export const stateWords: Readonly<Record<BuyState, string>> = {
+  draft: 'Draft',
+  open: 'Open',
+  locked: 'Locked',
+  ordered: 'Ordered',
+  arrived: 'Arrived',
+  splitting: 'Splitting',
+  pickup: 'Pickup',
+  settled: 'Settled',
+  cancelled: 'Cancelled',
+};

@@ -15,6 +15,13 @@ export const buysRoutes: RouteRecordRaw[] = [
     props: true,
     meta: { needs: 'session', layout: 'main', title: 'Buy', nav: 'buys' },
     // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
-    children: [],
+    children: [
+      {
+        path: 'draft',
+        name: 'buy-draft',
+        component: () => import('src/pages/buys/DraftPage.vue'),
+        props: true,
+      },
+    ],
   },
 ];
