@@ -18,6 +18,7 @@ import { outboxRoutes } from './outbox.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
 import { sheetRoutes } from './sheet.ts';
+import { splitsRoutes } from './splits.ts';
 import { suppliersRoutes } from './suppliers.ts';
 import { uploadsRoutes } from './uploads.ts';
 
@@ -40,6 +41,7 @@ export const allRoutes: readonly RouteDef[] = [
   ...buyPeopleRoutes,
   ...sheetRoutes,
   ...ledgerRoutes,
+  ...splitsRoutes,
 ];
 
 const readFile = multer({

@@ -14,6 +14,15 @@ export const BuyMay = z.strictObject({
   offerResponsibility: z.boolean(),
   answerResponsibility: z.boolean(),
   passResponsibility: z.boolean(),
+  /** Arrivals and the bags' weights. */
+  countBags: z.boolean(),
+  weigh: z.boolean(),
+  /** Targets, moving the split on, taking portions out. */
+  runSplit: z.boolean(),
+  /** Whether the club bears what was lost above 2 %. */
+  takeLoss: z.boolean(),
   handOn: z.boolean(),
+  seeNotices: z.boolean(),
+  writeNotices: z.boolean(),
 });
 export type BuyMay = z.infer<typeof BuyMay>;

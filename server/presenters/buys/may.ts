@@ -2,6 +2,8 @@ import type { BuyState } from '#shared/domain/buys/states.ts';
 import type { BuyMay } from '#shared/schemas/buyMay.ts';
 import type { BuyStanding } from '../../policies/actor.ts';
 import * as buys from '../../policies/buys.ts';
+import * as notices from '../../policies/notices.ts';
+import * as splits from '../../policies/splits.ts';
 
 /** Facts of the buy that an act depends on besides its state. */
 export interface MayFacts {
@@ -39,6 +41,12 @@ export function mayWithBuy(actor: BuyStanding, facts: MayFacts): BuyMay {
     answerResponsibility:
       buys.canAnswerResponsibility(actor) && facts.offeredToId === actor.membershipId,
     passResponsibility: buys.canPassResponsibility(actor) && live.includes(state),
+    countBags: splits.canRunSplit(actor) && isIn('locked', 'ordered', 'arrived', 'splitting'),
+    weigh: splits.canWeigh(actor) && isIn('splitting'),
+    runSplit: splits.canRunSplit(actor) && isIn('ordered', 'arrived', 'splitting'),
+    takeLoss: splits.canTakeLoss(actor) && isIn('arrived', 'splitting'),
+    seeNotices: notices.canReadDeliveries(actor) && facts.opened,
+    writeNotices: notices.canSendNotices(actor) && facts.opened,
     handOn: buys.canHandOn(actor) && isIn('locked', 'ordered', 'arrived', 'splitting', 'pickup'),
   };
 }

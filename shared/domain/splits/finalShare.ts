@@ -64,24 +64,21 @@ export function finalShareOf(given: {
 }): FinalShare {
   const { terms, charged, reconciled, costs } = given;
   const excess = given.clubTakesExcess ? excessOf(costs.lines, reconciled) : [];
-  const pledges = charged.map(
-    ({ membershipId, lineId, chargedMg, at }): SheetPledge => ({
-      membershipId,
-      lineId,
-      wantedMg: chargedMg,
-      upToMg: null,
-      version: 0,
-      at,
-    }),
-  );
+  const pledges = charged.map(({ membershipId, lineId, chargedMg, at }): SheetPledge => ({
+    membershipId,
+    lineId,
+    wantedMg: chargedMg,
+    upToMg: null,
+    version: 0,
+    at,
+  }));
   const lines: Received['lines'] = {};
   for (const { id } of terms.lines) {
     const cost = costs.lines[id];
     const own = charged.filter(({ lineId }) => lineId === id).map(({ chargedMg }) => chargedMg);
     lines[id] = {
       availableMg: exactSum([...own, reconciled[id]?.shelfMg ?? 0], 'availableMg'),
-      costMinor:
-        (cost?.costMinor ?? 0) - (excess.find(({ lineId }) => lineId === id)?.minor ?? 0),
+      costMinor: (cost?.costMinor ?? 0) - (excess.find(({ lineId }) => lineId === id)?.minor ?? 0),
       ...(cost?.taxRate === undefined ? {} : { taxRate: cost.taxRate }),
     };
   }

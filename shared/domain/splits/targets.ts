@@ -65,7 +65,14 @@ function availableMg(given: TargetsGiven, kept: ReadonlyMap<string, Target>, lin
       kept.has(keyOf(portion)),
   );
   const left = exactSum(bags.map(bagLeavesMg), 'availableMg');
-  return Math.max(0, left - exactSum(promised.map(({ targetMg }) => targetMg), 'promisedMg'));
+  return Math.max(
+    0,
+    left -
+      exactSum(
+        promised.map(({ targetMg }) => targetMg),
+        'promisedMg',
+      ),
+  );
 }
 
 /**
@@ -124,7 +131,13 @@ export function portionChanges<P extends { targetMg: number; state: StandingPort
   targetMg: number,
 ): PortionChange<P>[] {
   const living = portions.filter(({ state }) => state !== 'void');
-  if (exactSum(living.map((portion) => portion.targetMg), 'targetMg') === targetMg) return [];
+  if (
+    exactSum(
+      living.map((portion) => portion.targetMg),
+      'targetMg',
+    ) === targetMg
+  )
+    return [];
   if (targetMg === 0) return living.map((portion) => ({ act: 'void', portion }));
   const [first = portions[0], ...rest] = living;
   if (!first) return [{ act: 'add', targetMg }];
