@@ -1,54 +1,9 @@
 import { z } from 'zod';
+import { mayTurnOff, noticeKinds } from '../domain/notices/noticeKinds.ts';
 import { Id, Instant, Text } from './fields.ts';
 
-/** What notices are about; those that concern money or pickup can't be turned off. */
-export const noticeKinds = [
-  'invitation',
-  'buy_opened',
-  'terms_changed',
-  'closing_soon',
-  'locked',
-  'reopened',
-  'cancelled',
-  'payment_received',
-  'ordered',
-  'arrived',
-  'split_day',
-  'pickup',
-  'final_share',
-  'reminder',
-  'unclaimed',
-  'statement',
-  'pledge_changed',
-  'handed_on',
-  'role_changed',
-  'account',
-  'message',
-] as const;
 export const NoticeKind = z.enum(noticeKinds);
 export type NoticeKind = z.infer<typeof NoticeKind>;
-
-const always: ReadonlySet<NoticeKind> = new Set<NoticeKind>([
-  'invitation',
-  'locked',
-  'reopened',
-  'cancelled',
-  'payment_received',
-  'pickup',
-  'final_share',
-  'reminder',
-  'unclaimed',
-  'statement',
-  'account',
-]);
-
-/** Kinds of notices that tell of money: seen and sent by the treasurer. */
-export const paymentKinds: readonly NoticeKind[] = ['payment_received', 'statement'];
-
-/** Whether a member may turn notices of this kind off. */
-export function mayTurnOff(kind: NoticeKind): boolean {
-  return !always.has(kind);
-}
 
 /** A notice as its reader has it in the app. */
 export const Notice = z.strictObject({

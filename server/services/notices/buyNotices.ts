@@ -1,10 +1,9 @@
-import {
-  mayTurnOff,
-  paymentKinds,
-  type Delivery,
-  type DeliveryList,
-  type NoticeDraft,
-  type SendNoticeBody,
+import { paymentKinds } from '#shared/domain/notices/noticeKinds.ts';
+import type {
+  Delivery,
+  DeliveryList,
+  NoticeDraft,
+  SendNoticeBody,
 } from '#shared/schemas/notices.ts';
 import { select, type Tx } from '../../config/database.ts';
 import type { BuyActor } from '../actors.ts';
@@ -169,7 +168,6 @@ export async function sendBuyNotice(
         kind: body.kind,
         subject: body.subject,
         to: to.length,
-        mayTurnOff: mayTurnOff(body.kind),
       },
     });
     return { sent: to.length };

@@ -1,4 +1,4 @@
-import { mayTurnOff, type NoticeKind } from '#shared/schemas/notices.ts';
+import { mayTurnOff, type NoticeKind } from '#shared/domain/notices/noticeKinds.ts';
 import { select, execute, type Tx } from '../../config/database.ts';
 import { logger } from '../../config/logger.ts';
 import { renderNotice, type NoticeContent } from '../../mail/renderNotice.ts';

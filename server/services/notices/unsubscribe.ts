@@ -1,4 +1,5 @@
-import { NoticeKind, mayTurnOff, type UnsubscribeReply } from '#shared/schemas/notices.ts';
+import { mayTurnOff } from '#shared/domain/notices/noticeKinds.ts';
+import { NoticeKind, type UnsubscribeReply } from '#shared/schemas/notices.ts';
 import { execute, select, transact } from '../../config/database.ts';
 import { readUnsubscribeToken } from '../../mail/unsubscribeToken.ts';
 import { notFound } from '../problem.ts';

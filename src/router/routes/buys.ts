@@ -17,6 +17,12 @@ export const buysRoutes: RouteRecordRaw[] = [
     // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
     children: [
       {
+        path: 'notices',
+        name: 'buy-notices',
+        component: () => import('src/pages/buys/BuyNoticesPage.vue'),
+        props: true,
+      },
+      {
         path: 'draft',
         name: 'buy-draft',
         component: () => import('src/pages/buys/DraftPage.vue'),
