@@ -62,7 +62,9 @@ await runCommand(async () => {
     writeFileSync(packed, '', { mode: 0o600 });
     const here = ['-C', folder, parts.note, parts.dump];
     const data = files.length > 0 ? ['-C', dataFolder, ...files] : [];
-    await tar(['-cf', packed, ...here, ...data], 'tar could not pack the backup');
+    // Uploads that are being written now are not in the dump yet.
+    const args = ['-cf', packed, '--exclude=*.part', ...here, ...data];
+    await tar(args, 'tar could not pack the backup', [0, 1]);
     renameSync(packed, target);
   });
   if (process.env.S3_BUCKET) say('Files in the S3 store are not in it: back up the bucket too.');

@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { LauncherProblem } from './problem.mjs';
-import { lastLines, run } from './processes.mjs';
+import { run } from './processes.mjs';
 import { inProject, projectFolder } from './project.mjs';
 import { step } from './steps.mjs';
 
@@ -29,6 +29,13 @@ export function hashSources() {
   return hash.digest('hex');
 }
 
+// The cause comes first; long lists of modules follow it.
+function errorIn(output) {
+  const lines = output.trim().split('\n');
+  const first = lines.findIndex((line) => /error|could not|cannot/i.test(line));
+  return lines.slice(Math.max(first, 0)).slice(0, 20).join('\n');
+}
+
 /** Builds the client when its sources changed since the last complete build. */
 export async function ensureClientBuild() {
   const hash = hashSources();
@@ -37,8 +44,7 @@ export async function ensureClientBuild() {
   await step('Building the client', async () => {
     const args = [inProject('node_modules/@quasar/app-vite/bin/quasar.js'), 'build'];
     const { code, output } = await run(process.execPath, args, { cwd: projectFolder });
-    if (code !== 0)
-      throw new LauncherProblem(`The client could not be built:\n${lastLines(output, 40)}`);
+    if (code !== 0) throw new LauncherProblem(`The client could not be built:\n${errorIn(output)}`);
     writeFileSync(record, hash);
   });
 }
