@@ -31,8 +31,8 @@ export function hashSources() {
 
 // The cause comes first; long lists of modules follow it.
 function errorIn(output) {
-  const lines = output.trim().split('\n');
-  const first = lines.findIndex((line) => /error|could not|cannot/i.test(line));
+  const lines = output.split('\n').filter((line) => !/^\s+at |^\s*$/.test(line));
+  const first = lines.findIndex((line) => /failed|error/i.test(line));
   return lines.slice(Math.max(first, 0)).slice(0, 20).join('\n');
 }
 
