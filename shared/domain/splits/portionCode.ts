@@ -16,7 +16,7 @@ export function checkDigit(digits: string): string {
  * The short code on a portion's label: its number in the buy, at least three digits, and a check digit. It names the
  * portion and grants nothing.
  *
- * @example portionCode(79) // '0799'
+ * @example portionCode(1) // '0016'
  */
 export function portionCode(sequence: number): string {
   const digits = String(sequence).padStart(3, '0');
