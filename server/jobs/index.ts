@@ -1,6 +1,7 @@
 import { logger } from '../config/logger.ts';
 import { closingJob, closingSoonJob, planJob } from './closing.ts';
 import { eraseExpiredJob } from './eraseExpired.ts';
+import { remindDuesJob } from './remindDues.ts';
 import { sendMail } from './sendMail.ts';
 
 /** Something done again and again; every process runs it, so it must take its own locks in the database. */
@@ -10,7 +11,14 @@ export interface Job {
   run(): Promise<void>;
 }
 
-const jobs: readonly Job[] = [sendMail, eraseExpiredJob, closingJob, closingSoonJob, planJob];
+const jobs: readonly Job[] = [
+  sendMail,
+  eraseExpiredJob,
+  closingJob,
+  closingSoonJob,
+  planJob,
+  remindDuesJob,
+];
 
 /** Starts all jobs; the returned function lets running ones finish and starts no more. */
 export async function startJobs(list: readonly Job[] = jobs): Promise<() => Promise<void>> {

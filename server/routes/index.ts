@@ -5,6 +5,7 @@ import { noSuchRoute } from '../middlewares/problem.ts';
 import type { RouteDef } from '../middlewares/route.ts';
 import { accountsRoutes } from './accounts.ts';
 import { auditRoutes } from './audit.ts';
+import { billsRoutes } from './bills.ts';
 import { buyPeopleRoutes } from './buyPeople.ts';
 import { buysRoutes } from './buys.ts';
 import { buyTermsRoutes } from './buyTerms.ts';
@@ -14,6 +15,7 @@ import { ledgerRoutes } from './ledger.ts';
 import { membersRoutes } from './members.ts';
 import { offerImportRoutes } from './offerImport.ts';
 import { noticesRoutes } from './notices.ts';
+import { ordersRoutes } from './orders.ts';
 import { outboxRoutes } from './outbox.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
@@ -41,6 +43,8 @@ export const allRoutes: readonly RouteDef[] = [
   ...buyPeopleRoutes,
   ...sheetRoutes,
   ...ledgerRoutes,
+  ...ordersRoutes,
+  ...billsRoutes,
   ...splitsRoutes,
 ];
 
