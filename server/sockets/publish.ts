@@ -35,10 +35,14 @@ export function publishToAccount<E extends keyof ServerEvents>(
   }
 }
 
-/** Ends every socket of an account, in all processes: after sign-out everywhere, removal or loss of a role. */
-export function disconnectAccount(accountId: string): void {
+/**
+ * Ends every socket of an account, in all processes: after sign-out everywhere, removal or loss of a role.
+ * @param exceptSessionId the session that stays, after a change of password
+ */
+export function disconnectAccount(accountId: string, exceptSessionId?: string): void {
   try {
-    io?.in(`account:${accountId}`).disconnectSockets(true);
+    const all = io?.in(`account:${accountId}`);
+    (exceptSessionId ? all?.except(`session:${exceptSessionId}`) : all)?.disconnectSockets(true);
   } catch (error) {
     logger.error({ err: error }, 'disconnect failed');
   }

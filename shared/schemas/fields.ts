@@ -10,7 +10,9 @@ export const Instant = z.iso.datetime();
 /** A calendar day in the club's zone. */
 export const Day = z.iso.date();
 export const ClubSlug = z.string().regex(/^[a-z0-9]+(-[a-z0-9]+)*$/);
-export const Email = z.email().max(254);
+export const Email = z
+  .email('Write an e-mail address, such as name@example.org.')
+  .max(254, 'At most 254 characters.');
 export const DisplayName = z.string().trim().min(1, 'Write a name.').max(80);
 export const Text = (max: number) => z.string().trim().max(max, `At most ${max} characters.`);
 

@@ -6,8 +6,10 @@ type Joined = (answer: JoinAnswer, again: boolean) => void;
 type Room = JoinBuy & { holders: Set<Joined> };
 
 const ANSWER_MS = 5_000;
+const AGAIN_MS = 500;
 
 let socket: LiveSocket | null = null;
+let whenRefused: () => void = () => {};
 const rooms = new Map<string, Room>();
 const attachers = new Set<(to: LiveSocket) => void>();
 const watchers = new Set<(connected: boolean) => void>();
@@ -37,9 +39,23 @@ export function connectSocket() {
     for (const room of rooms.values()) void ask(room, before);
     before = true;
   });
-  opened.on('disconnect', () => tell(false));
+  opened.on('disconnect', (reason) => {
+    tell(false);
+    // The server hangs up when a role or a session was taken away: who is still let in connects again.
+    if (reason === 'io server disconnect' && socket === opened) {
+      setTimeout(() => socket === opened && opened.connect(), AGAIN_MS);
+    }
+  });
+  opened.on('connect_error', ({ message }) => {
+    if (message === 'signed_out') whenRefused();
+  });
   attachers.forEach((attach) => attach(opened));
 }
+
+/** Named once, by the session: called when the server lets this page listen no more, since its session has ended. */
+export const onSocketRefused = (handler: () => void) => {
+  whenRefused = handler;
+};
 
 /** Closes it; called at sign-out. */
 export function disconnectSocket() {

@@ -1,14 +1,25 @@
 import { defineBoot } from '#q-app/wrappers';
 import { watch } from 'vue';
-import { connectSocket, disconnectSocket, onLive } from 'src/api/socket.ts';
+import { connectSocket, disconnectSocket, onConnection, onLive } from 'src/api/socket.ts';
 import { useBuysStore } from 'src/stores/buys.ts';
 import { useSessionStore } from 'src/stores/session.ts';
+import { useSplitsStore } from 'src/stores/splits.ts';
 
 export default defineBoot(() => {
   const session = useSessionStore();
   const buys = useBuysStore();
+  const splits = useSplitsStore();
 
   onLive('buy:changed', (change) => buys.hear(change));
+  onLive('buy:changed', (change) => splits.hear(change));
+  onLive('split:changed', (change) => splits.receive(change));
+
+  let lost = false;
+  onConnection((connected) => {
+    // A role or a membership may be another one since the connection was lost.
+    if (connected && lost) session.load().catch(() => undefined);
+    lost = !connected;
+  });
 
   watch(
     () => session.account?.id,

@@ -2,8 +2,7 @@ import { execute, type Tx } from '../../config/database.ts';
 import { disconnectAccount } from '../../sockets/publish.ts';
 
 /**
- * Ends every session of an account, but the one named; its sockets are closed in all processes, and a page that is
- * still signed in connects again.
+ * Ends every session of an account, but the one named; the sockets of those are closed in all processes.
  */
 export async function endSessions(tx: Tx, accountId: string, exceptSid?: string): Promise<void> {
   await execute(
@@ -11,5 +10,5 @@ export async function endSessions(tx: Tx, accountId: string, exceptSid?: string)
     { accountId, exceptSid: exceptSid ?? null },
     tx,
   );
-  tx.afterCommit(() => disconnectAccount(accountId));
+  tx.afterCommit(() => disconnectAccount(accountId, exceptSid));
 }

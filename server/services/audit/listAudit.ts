@@ -23,7 +23,8 @@ export async function listAudit(actor: ClubActor, query: AuditQuery): Promise<Au
   const rows = await select<AuditRow>(
     `select e.id, e.at, e.actor_id, e.actor_name, e.action, e.subject_type, e.before, e.after,
         b.id as buy_id, b.name as buy_name,
-        case e.subject_type when 'membership' then m.display_name when 'buy' then sb.name end as subject_name,
+        case e.subject_type when 'membership' then m.display_name when 'buy' then sb.name
+          when 'invitation' then coalesce(e.after ->> 'email', e.before ->> 'email') end as subject_name,
         (b.responsible_id = :memberId or exists (
           select 1 from buy_organisers o where o.buy_id = e.buy_id and o.membership_id = :memberId)) as own_buy
      from audit_entries e

@@ -42,7 +42,7 @@ export async function revokeInvitation(actor: ClubActor, id: string): Promise<vo
       by: byActor(actor),
       action: 'clubs.invitation_revoke',
       subject: { type: 'invitation', id },
-      before: { kind: invitation.kind, email: invitation.email },
+      before: invitation.email ? { email: invitation.email } : { kind: 'join link' },
     });
   });
 }

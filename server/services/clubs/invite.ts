@@ -62,13 +62,11 @@ async function write(
   await writeAudit(tx, {
     clubId: actor.club.id,
     by: byActor(actor),
-    action: 'clubs.invite',
+    action: wanted.kind === 'link' ? 'clubs.join_link' : 'clubs.invite',
     subject: { type: 'invitation', id: row.id },
-    after: {
-      kind: wanted.kind,
-      ...(wanted.email ? { email: wanted.email } : {}),
-      ...(wanted.guestId ? { guest: wanted.name } : {}),
-    },
+    ...(wanted.email
+      ? { after: { email: wanted.email, ...(wanted.guestId ? { guest: wanted.name } : {}) } }
+      : {}),
   });
   return { id: row.id, token };
 }

@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { testPassword } from '#tests/support/client.ts';
 import { closed, listen } from '#tests/support/live.ts';
 import { makeWorld, type World } from '#tests/support/world.ts';
 
@@ -39,6 +40,17 @@ describe('sockets of who may no longer listen', () => {
     const end = closed(client);
     await acting.call('PUT', url, { roles: { ...roles, treasurer: false }, version: 2 });
     await end;
+  });
+
+  it('close elsewhere when the password is changed, but not here', async () => {
+    const { member } = world.people;
+    const [here, elsewhere] = [await live.signIn(member.email), await live.signIn(member.email)];
+    const [stays, goes] = [await live.open(here.cookie), await live.open(elsewhere.cookie)];
+    const end = closed(goes);
+    const body = { current: testPassword, password: 'rain on the greenhouse roof' };
+    expect((await here.call('PUT', '/account/password', body)).status).toBe(200);
+    await end;
+    expect(stays.connected).toBe(true);
   });
 
   it('close in every place at sign-out everywhere, and in one place at sign-out', async () => {
