@@ -4,6 +4,7 @@ import { coverItems } from './coverItems.ts';
 import { plainWeights, type LineCovers } from './lineCovers.ts';
 import type { PackModel } from './packModel.ts';
 import type { Packing } from './packing.ts';
+import type { LimitPrices } from './priceLimits.ts';
 import { PlanSearch } from './planSearch.ts';
 
 /** The best plan found, or null; `exact` is false when time ran out before it was proven. */
@@ -38,19 +39,21 @@ function dearest(model: PackModel): number {
 /**
  * The best plan of a model.
  *
+ * @param memory bounds from plans of the same request, where some lines needed less
  * @param known a plan that is feasible, where one is; the search then only looks for better ones
  */
 export function bestPlan(
   model: PackModel,
   covers: LineCovers,
   budget: Budget,
+  memory: Map<string, LimitPrices>,
   known?: Packing[],
 ): Best {
   const most = known ? Infinity : dearest(model);
   let guess = known ? Infinity : most / 64;
   let found = known;
   for (;;) {
-    const search = new PlanSearch(model, covers, budget, guess);
+    const search = new PlanSearch(model, covers, budget, memory, guess);
     try {
       if (found) search.offer(found);
       const plan = search.run();

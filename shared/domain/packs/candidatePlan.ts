@@ -1,5 +1,5 @@
 import { termsCost, type PackModel } from './packModel.ts';
-import { basketOf, compareCounts, type Packing } from './packing.ts';
+import { compareCounts, type Packing } from './packing.ts';
 
 /** A feasible plan under search, priced by the suppliers' true terms. */
 export type CandidatePlan = {
@@ -24,10 +24,9 @@ export function candidatePlan(model: PackModel, packings: Packing[]): CandidateP
     if (!supplier?.shared) continue;
     let value = 0;
     let bought = 0;
-    for (const { line, counts } of packings) {
-      const basket = basketOf(line.items, counts, s);
-      value += basket.value;
-      bought += basket.mass;
+    for (const { values, masses } of packings) {
+      value += values[s] as number;
+      bought += masses[s] as number;
     }
     cost += termsCost(supplier, value, bought);
   }

@@ -9,14 +9,12 @@ const rememberAfter = 2000;
 type Seen = { acc: number; packs: number; counts: number[] };
 
 /**
- * Depth-first search for one line's cheapest cover, cheapest item per mass first, cut off by what the
- * rest must cost at least.
+ * Depth-first search for one line's best cover, cheapest item per mass first, cut off by what the
+ * rest must cost at least. Equal costs are followed to the end, since mass, packs and ids decide.
  */
 class CoverSearch {
-  best = Infinity;
-  bestCounts: number[] | null = null;
-  bestPacking: Packing | null = null;
-  readonly counts: number[];
+  best: Packing | null = null;
+  readonly #counts: number[];
   #nodes = 0;
   readonly #seen = new Map<number, Seen>();
   readonly #lone: boolean;
@@ -25,34 +23,22 @@ class CoverSearch {
     readonly line: LineModel,
     readonly suppliers: readonly SupplierModel[],
     readonly cover: CoverItems,
-    readonly ties: boolean,
     readonly budget: Budget,
   ) {
-    this.counts = line.items.map(() => 0);
+    this.#counts = line.items.map(() => 0);
     this.#lone = line.privates.length > 0;
   }
 
-  /** Whether nothing from here can be better than the best; in `ties` mode, nor as cheap. */
   #hopeless(bound: number): boolean {
-    if (this.best === Infinity) return bound === Infinity;
-    const slack = 1e-9 * (1 + this.best);
-    return this.ties ? bound > this.best + slack : bound >= this.best - slack;
+    if (!this.best) return bound === Infinity;
+    return bound > this.best.cost + 1e-9 * (1 + this.best.cost);
   }
 
-  #leaf(acc: number): void {
-    const { line, suppliers, counts } = this;
-    const total = this.#lone ? acc + privateShipping(line, counts, suppliers) : acc;
-    if (total === Infinity) return;
-    if (!this.ties) {
-      if (total >= this.best) return;
-      this.best = total;
-      this.bestCounts = [...counts];
-      return;
-    }
-    const packing = makePacking(line, counts, suppliers);
-    if (this.bestPacking && comparePackings(this.bestPacking, packing) <= 0) return;
-    this.bestPacking = packing;
-    this.best = packing.cost;
+  #leaf(): void {
+    const { line, suppliers } = this;
+    if (privateShipping(line, this.#counts, suppliers) === Infinity) return;
+    const packing = makePacking(line, this.#counts, suppliers);
+    if (!this.best || comparePackings(this.best, packing) > 0) this.best = packing;
   }
 
   /** Whether a prefix at least as good has already been at this item with this much to cover. */
@@ -60,9 +46,9 @@ class CoverSearch {
     if (this.#lone || ++this.#nodes < rememberAfter) return false;
     const key = rest * 64 + i;
     if (!Number.isSafeInteger(key)) return false;
-    const { line, counts } = this;
-    const packs = line.items.reduce(
-      (sum, item, at) => sum + item.packs * (counts[at] as number),
+    const counts = this.#counts;
+    const packs = this.line.items.reduce(
+      (sum, item, at) => sum + item.packs * (counts[at] ?? 0),
       0,
     );
     const seen = this.#seen.get(key);
@@ -72,18 +58,16 @@ class CoverSearch {
   }
 
   #noWorse(seen: Seen, packs: number): boolean {
-    if (!this.ties || seen.packs !== packs) return !this.ties || seen.packs < packs;
-    const { counts } = this;
-    const at = counts.findIndex((count, index) => count !== seen.counts[index]);
-    return at < 0 || (seen.counts[at] as number) > (counts[at] as number);
+    if (seen.packs !== packs) return seen.packs < packs;
+    const at = this.#counts.findIndex((count, index) => count !== seen.counts[index]);
+    return at < 0 || (seen.counts[at] ?? 0) > (this.#counts[at] ?? 0);
   }
 
   visit(i: number, rest: number, acc: number): void {
-    const { cover, counts } = this;
-    const { items, prices, efficiency, order, lastPad, extra } = cover;
+    const { items, prices, efficiency, order, lastPad, extra } = this.cover;
     this.budget.tick();
-    if (rest <= 0 && i > lastPad) return this.#leaf(acc);
-    if (i === items.length) return rest <= 0 ? this.#leaf(acc) : undefined;
+    if (rest <= 0 && i > lastPad) return this.#leaf();
+    if (i === items.length) return rest <= 0 ? this.#leaf() : undefined;
     if (rest > 0 && this.#beenHere(i, rest, acc)) return;
 
     const { mass, max } = items[i] as Item;
@@ -99,10 +83,10 @@ class CoverSearch {
         if (left > 0) break;
         continue;
       }
-      counts[place] = count;
+      this.#counts[place] = count;
       this.visit(i + 1, left, cost);
     }
-    counts[place] = 0;
+    this.#counts[place] = 0;
   }
 }
 
@@ -118,24 +102,7 @@ export function bestCover(
   cover: CoverItems,
   budget: Budget,
 ): Packing | null {
-  const search = new CoverSearch(line, suppliers, cover, true, budget);
+  const search = new CoverSearch(line, suppliers, cover, budget);
   search.visit(0, line.need, 0);
-  return search.bestPacking;
-}
-
-/**
- * The least reduced cost at which a line can be covered, with counts that reach it; the value may be
- * high by a billionth.
- *
- * @throws OutOfTime
- */
-export function reducedCover(
-  line: LineModel,
-  suppliers: readonly SupplierModel[],
-  cover: CoverItems,
-  budget: Budget,
-): { value: number; counts: number[] } | null {
-  const search = new CoverSearch(line, suppliers, cover, false, budget);
-  search.visit(0, line.need, 0);
-  return search.bestCounts && { value: search.best, counts: search.bestCounts };
+  return search.best;
 }

@@ -1,8 +1,9 @@
-import { bestCover, reducedCover } from './cheapestCover.ts';
+import { bestCover } from './cheapestCover.ts';
 import type { Budget } from './clock.ts';
 import { coverItems, type Weights } from './coverItems.ts';
 import type { LineModel, SupplierModel } from './packModel.ts';
 import { makePacking, type Packing } from './packing.ts';
+import { ReducedCover } from './reducedCover.ts';
 
 /** Plain prices: a reduced price under them is the price. */
 export function plainWeights(suppliers: number): Weights {
@@ -19,11 +20,14 @@ export class LineCovers {
   readonly #best = new Map<string, Packing | null>();
   readonly #plain: Weights;
   readonly #padded: boolean[];
+  readonly #reduced: ReducedCover;
+  readonly #recent = new Map<LineModel, Packing[]>();
 
   constructor(
     readonly suppliers: readonly SupplierModel[],
     readonly budget: Budget,
   ) {
+    this.#reduced = new ReducedCover(suppliers, budget);
     this.#plain = plainWeights(suppliers.length);
     this.#padded = suppliers.map((supplier) => !supplier.shared && supplier.padded);
   }
@@ -47,9 +51,21 @@ export class LineCovers {
     allowed: readonly boolean[],
     weights: Weights,
   ): { value: number; packing: Packing } | null {
-    const { suppliers } = this;
-    const cover = coverItems(line, suppliers, allowed, this.#padded, weights);
-    const found = reducedCover(line, suppliers, cover, this.budget);
-    return found && { value: found.value, packing: makePacking(line, found.counts, suppliers) };
+    const value = this.#reduced.search(line, allowed, weights);
+    if (value === Infinity) return null;
+    return { value, packing: this.#packing(line, this.#reduced.bestCounts) };
+  }
+
+  /** A packing made before, where the counts are the same: few differ however often one asks. */
+  #packing(line: LineModel, counts: Float64Array): Packing {
+    let recent = this.#recent.get(line);
+    if (!recent) this.#recent.set(line, (recent = []));
+    for (const packing of recent) {
+      if (packing.counts.every((count, i) => count === counts[i])) return packing;
+    }
+    const packing = makePacking(line, counts, this.suppliers);
+    recent.unshift(packing);
+    if (recent.length > 16) recent.pop();
+    return packing;
   }
 }

@@ -1,6 +1,6 @@
 import type { Budget } from './clock.ts';
 import type { Item } from './packModel.ts';
-import { compareCounts, type Packing } from './packing.ts';
+import type { Packing } from './packing.ts';
 import type { SharedLimit } from './termsChoice.ts';
 import { reducedPrice, type Weights } from './coverItems.ts';
 
@@ -18,17 +18,13 @@ type State = {
   reduced: number[];
   option: Option | null;
   before: State | null;
+  /** Packs by offer, once a tie has asked for them. */
+  offers: Map<number, number> | null;
 };
 
 /** What a packing uses of a shared limit. */
-function useOf({ line, counts }: Packing, { supplier, of, sign }: SharedLimit): number {
-  let sum = 0;
-  line.items.forEach((item, i) => {
-    if (item.supplier === supplier) {
-      sum += (counts[i] as number) * (of === 'value' ? item.price : item.mass);
-    }
-  });
-  return sign * sum;
+function useOf(packing: Packing, { supplier, of, sign }: SharedLimit): number {
+  return sign * ((of === 'value' ? packing.values : packing.masses)[supplier] as number);
 }
 
 /** A packing's cost under weights, its private shipping included. */
@@ -37,6 +33,7 @@ export function reducedCost({ line, counts, cost }: Packing, weights: Weights): 
   let reduced = 0;
   for (let i = 0; i < counts.length; i++) {
     const count = counts[i] as number;
+    if (count === 0) continue;
     const item = line.items[i] as Item;
     goods += count * item.price;
     reduced += count * reducedPrice(item, weights);
@@ -59,21 +56,29 @@ function chain(state: State): Packing[] {
   return packings;
 }
 
-/** Order of the last tie: more packs of the lowest offer id. Both states cover the same lines. */
-function compareOffers(a: State, b: State): number {
-  const count = (state: State) => {
+function offersOf(state: State): Map<number, number> {
+  if (!state.offers) {
     const packs = new Map<number, number>();
     for (const { line, counts } of chain(state)) {
       line.items.forEach((item, i) => packs.set(item.offer, (counts[i] as number) * item.packs));
     }
-    return packs;
-  };
-  const [left, right] = [count(a), count(b)];
-  const offers = [...left.keys()].sort((x, y) => x - y);
-  return compareCounts(
-    offers.map((offer) => left.get(offer) ?? 0),
-    offers.map((offer) => right.get(offer) ?? 0),
-  );
+    state.offers = packs;
+  }
+  return state.offers;
+}
+
+/** Order of the last tie: more packs of the lowest offer id. Both states cover the same lines. */
+function compareOffers(a: State, b: State): number {
+  const [left, right] = [offersOf(a), offersOf(b)];
+  let lowest = Infinity;
+  let difference = 0;
+  for (const [offer, packs] of left) {
+    const other = right.get(offer) ?? 0;
+    if (offer >= lowest || packs === other) continue;
+    lowest = offer;
+    difference = other - packs;
+  }
+  return difference;
 }
 
 function compareStates(a: State, b: State): number {
@@ -93,13 +98,22 @@ function undominated(states: State[], limits: number, budget: Budget): State[] {
     if (limits === 1) {
       if (use >= least) continue;
       least = use;
-    } else if (kept.some((other) => noMore(other.uses, state.uses))) continue;
+    } else if (matched(kept, state, budget)) continue;
     kept.push(state);
   }
   return kept;
 }
 
-function noMore(a: number[], b: number[]): boolean {
+function matched(kept: State[], state: State, budget: Budget): boolean {
+  for (const other of kept) {
+    budget.tick();
+    if (noMore(other.uses, state.uses)) return true;
+  }
+  return false;
+}
+
+/** Whether `a` uses no more than `b` of any shared limit. */
+export function noMore(a: number[], b: number[]): boolean {
   for (let d = 0; d < a.length; d++) if ((a[d] as number) > (b[d] as number)) return false;
   return true;
 }
@@ -135,14 +149,10 @@ function restsOf(lines: Option[][], limits: number, bounds: number): Rest[] {
   return rests;
 }
 
-/** A merge's result: the best packing for each line, and whether nothing was cut by `width`. */
-export type Merged = { packings: Packing[] | null; complete: boolean };
-
 /**
  * Chooses one option a line, within the shared limits, at the least cost, mass, packs and offer ids.
  *
  * @param most plans that must cost more are dropped
- * @param width states kept after each line; the most promising by the last bound
  * @throws OutOfTime
  */
 export function mergeLines(
@@ -150,14 +160,11 @@ export function mergeLines(
   limits: SharedLimit[],
   bounds: PlanBound[],
   most: number,
-  width: number,
   budget: Budget,
-): Merged {
+): Packing[] | null {
   const order = [...lines].sort((a, b) => a.length - b.length);
   const rests = restsOf(order, limits.length, bounds.length);
   const slack = 1e-6 + 1e-8 * Math.abs(most);
-  const lastBound = bounds.length - 1;
-  let complete = true;
   let states: State[] = [
     {
       cost: 0,
@@ -167,6 +174,7 @@ export function mergeLines(
       reduced: bounds.map((bound) => bound.constant),
       option: null,
       before: null,
+      offers: null,
     },
   ];
   order.forEach((options, place) => {
@@ -180,16 +188,9 @@ export function mergeLines(
       }
     }
     states = undominated(next, limits.length, budget);
-    if (states.length > width) {
-      complete = false;
-      states.sort((a, b) => (a.reduced[lastBound] as number) - (b.reduced[lastBound] as number));
-      states.length = width;
-    }
   });
   const best = states.sort(compareStates)[0];
-  if (!best) return { packings: null, complete };
-  const packings = chain(best).sort((a, b) => a.line.index - b.line.index);
-  return { packings, complete };
+  return best ? chain(best).sort((a, b) => a.line.index - b.line.index) : null;
 }
 
 function extend(
@@ -222,5 +223,6 @@ function extend(
     reduced,
     option,
     before,
+    offers: null,
   };
 }

@@ -3,7 +3,8 @@ import { candidatePlan, type CandidatePlan } from './candidatePlan.ts';
 import { OutOfTime, type Budget } from './clock.ts';
 import type { LineCovers } from './lineCovers.ts';
 import type { LineModel, PackModel } from './packModel.ts';
-import { basketOf, type Packing } from './packing.ts';
+import type { Packing } from './packing.ts';
+import type { LimitPrices } from './priceLimits.ts';
 
 /** The place of a line, how much more it takes, and the packing it then gets. */
 export type Step = { line: number; moreMg: number; before: Packing; after: Packing };
@@ -39,7 +40,7 @@ function patched(model: PackModel, covers: LineCovers, plan: CandidatePlan, inde
   const line = model.lines[index] as LineModel;
   const used = model.suppliers.map((supplier, s) => {
     if (!supplier.shared) return true;
-    return plan.packings.some(({ line: own, counts }) => basketOf(own.items, counts, s).mass > 0);
+    return plan.packings.some(({ masses }) => (masses[s] as number) > 0);
   });
   let best: CandidatePlan | null = null;
   for (const allowed of [used, used.map(() => true)]) {
@@ -64,6 +65,7 @@ export function nextStepOf(
   plan: CandidatePlan,
   covers: LineCovers,
   budget: Budget,
+  memory: Map<string, LimitPrices>,
 ): Step | null {
   const packingOf = (of: CandidatePlan, line: number) => of.packings[line] as Packing;
   const fronts: Front[] = model.lines
@@ -82,7 +84,7 @@ export function nextStepOf(
     const need = model.lines[line]?.need ?? 0;
     const raised = withNeed(model, line, need + more);
     const known = more > need ? null : patched(raised, covers, front.plan, line);
-    const best = more > need ? null : bestPlan(raised, covers, budget, known?.packings);
+    const best = more > need ? null : bestPlan(raised, covers, budget, memory, known?.packings);
     if (best && !best.exact) throw new OutOfTime();
     if (!best?.plan) {
       front.more = Infinity;

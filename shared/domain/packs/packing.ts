@@ -8,6 +8,9 @@ export type Packing = {
   cost: number;
   mass: number;
   packs: number;
+  /** Value and mass of the goods by supplier. */
+  values: number[];
+  masses: number[];
 };
 
 /** Value and mass that a packing buys from one supplier. */
@@ -48,16 +51,35 @@ export function makePacking(
   counts: ArrayLike<number>,
   suppliers: readonly SupplierModel[],
 ): Packing {
-  let cost = privateShipping(line, counts, suppliers);
+  const values = suppliers.map(() => 0);
+  const masses = suppliers.map(() => 0);
+  let cost = 0;
   let mass = 0;
   let packs = 0;
-  line.items.forEach((item, i) => {
+  for (let i = 0; i < line.items.length; i++) {
     const count = counts[i] as number;
-    cost += item.price * count;
-    mass += item.mass * count;
+    if (count === 0) continue;
+    const item = line.items[i] as Item;
+    const price = item.price * count;
+    const weight = item.mass * count;
+    cost += price;
+    mass += weight;
     packs += item.packs * count;
-  });
-  return { line, counts: Array.from(counts), cost, mass, packs };
+    values[item.supplier] = (values[item.supplier] as number) + price;
+    masses[item.supplier] = (masses[item.supplier] as number) + weight;
+  }
+  for (const s of line.privates) {
+    cost += termsCost(suppliers[s] as SupplierModel, values[s] as number, masses[s] as number);
+  }
+  return {
+    line,
+    counts: Array.from(line.items, (_, i) => counts[i] as number),
+    cost,
+    mass,
+    packs,
+    values,
+    masses,
+  };
 }
 
 /**

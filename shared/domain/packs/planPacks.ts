@@ -6,6 +6,7 @@ import { LineCovers } from './lineCovers.ts';
 import { goodsOf, nextStepOf, type Step } from './nextStep.ts';
 import { packModel, type PackModel } from './packModel.ts';
 import type { NextStep, PackPlan, PackRequest } from './packTypes.ts';
+import type { LimitPrices } from './priceLimits.ts';
 import { perGram, pricePacks } from './pricePacks.ts';
 
 function nothing(reason: string, exact: boolean): PackPlan {
@@ -70,7 +71,8 @@ export function planPacks(request: PackRequest, budgetMs?: number): PackPlan {
   const budget = new Budget(budgetMs);
   const model = packModel(request);
   const covers = new LineCovers(model.suppliers, budget);
-  const { plan, exact } = bestPlan(model, covers, budget);
+  const memory = new Map<string, LimitPrices>();
+  const { plan, exact } = bestPlan(model, covers, budget, memory);
   if (!plan) {
     const reason = exact ? whyInfeasible(request, model) : 'No plan was found in the time given.';
     return nothing(reason, exact);
@@ -88,7 +90,7 @@ export function planPacks(request: PackRequest, budgetMs?: number): PackPlan {
     totalMinor: price.totalMinor,
     leftOverMg: price.leftOverMg,
   };
-  const step = exact ? tryNextStep(model, plan, covers, budget) : null;
+  const step = exact ? tryNextStep(model, plan, covers, budget, memory) : null;
   return step ? { ...result, nextStep: toNextStep(request, step) } : result;
 }
 
@@ -97,9 +99,10 @@ function tryNextStep(
   plan: CandidatePlan,
   covers: LineCovers,
   budget: Budget,
+  memory: Map<string, LimitPrices>,
 ): Step | null {
   try {
-    return nextStepOf(model, plan, covers, budget);
+    return nextStepOf(model, plan, covers, budget, memory);
   } catch (error) {
     if (error instanceof OutOfTime) return null;
     throw error;

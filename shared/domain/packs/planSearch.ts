@@ -2,9 +2,9 @@ import { candidatePlan, comparePlans, type CandidatePlan } from './candidatePlan
 import type { Budget } from './clock.ts';
 import { LineCovers, plainWeights } from './lineCovers.ts';
 import { listCovers } from './listCovers.ts';
-import { makeOption, mergeLines, type Option, type PlanBound } from './mergeLines.ts';
+import { makeOption, mergeLines, noMore, type Option, type PlanBound } from './mergeLines.ts';
 import type { PackModel } from './packModel.ts';
-import type { Packing } from './packing.ts';
+import { comparePackings, type Packing } from './packing.ts';
 import { LimitPricing, type LimitPrices } from './priceLimits.ts';
 import { shippingOptions, type ShippingOption } from './shippingOptions.ts';
 import { termsChoice, type TermsChoice } from './termsChoice.ts';
@@ -12,8 +12,11 @@ import { termsChoice, type TermsChoice } from './termsChoice.ts';
 /** A choice of terms that may still hold the best plan. */
 type Branch = { choice: TermsChoice; plainValue: number; bound: LimitPrices | null };
 
-/** How many states the first, quick merge keeps after each line. */
-const quickWidth = 60;
+/** How far above its bound a choice's plans are first looked for, as a share. */
+const firstReach = 0.0005;
+
+/** How many choices of terms are bounded before the first is settled. */
+const settleAfter = 4;
 
 /** Searches the best plan of a model exactly: each way the suppliers' terms can turn out, bounded. */
 export class PlanSearch {
@@ -24,6 +27,8 @@ export class PlanSearch {
     readonly model: PackModel,
     readonly covers: LineCovers,
     readonly budget: Budget,
+    /** Bounds of earlier searches by choice of terms; the need of some lines may have changed. */
+    readonly memory: Map<string, LimitPrices>,
     /** Plans dearer than this aren't looked for. */
     readonly guess = Infinity,
   ) {
@@ -107,24 +112,22 @@ export class PlanSearch {
     return priced ? [plain, { weights: bound.weights, constant: bound.constant }] : [plain];
   }
 
-  /** Every packing of every line that a plan within reach can hold. */
-  #listOptions({ choice, plainValue }: Branch, bound: LimitPrices, bounds: PlanBound[]) {
+  /** Every packing of every line that a plan of at most so much can hold. */
+  #listOptions(branch: Branch, bound: LimitPrices, bounds: PlanBound[], most: number) {
+    const { choice, plainValue } = branch;
     const values = [plainValue, bound.value];
     return this.model.lines.map((line, index): Option[] => {
-      const packing = bound.packings[index] as Packing;
       const plain = this.covers.best(line, choice.allowed) as Packing;
-      const least = bounds.map(({ weights }, k) =>
-        k === 0 ? plain.cost : makeOption(packing, [], [{ weights, constant: 0 }]).reduced[0],
-      ) as number[];
+      const least = [plain.cost, bound.costs[index] as number];
       const limits = bounds.map(({ weights }, k) => ({
         weights,
-        most: (least[k] as number) + (this.#slack() - (values[k] as number)),
+        most: (least[k] as number) + (most - (values[k] as number)),
       }));
       const { suppliers } = this.model;
       const { allowed, padded } = choice;
-      return listCovers(line, suppliers, allowed, padded, limits, this.budget).map((found) =>
-        makeOption(found, choice.limits, bounds),
-      );
+      const found = listCovers(line, suppliers, allowed, padded, limits, this.budget);
+      const options = found.map((packing) => makeOption(packing, choice.limits, bounds));
+      return undominatedOptions(options, this.budget);
     });
   }
 
@@ -137,13 +140,13 @@ export class PlanSearch {
       return;
     }
     const bounds = this.#bounds(branch, bound);
-    for (const width of [quickWidth, Infinity]) {
-      const lines = this.#listOptions(branch, bound, bounds).map((options) =>
-        undominatedOptions(options),
-      );
-      const merged = mergeLines(lines, choice.limits, bounds, this.#most(), width, this.budget);
-      if (merged.packings) this.offer(merged.packings);
-      if (merged.complete) return;
+    // Lists grow steeply with the reach, so it starts short and grows until a plan is within it.
+    for (let reach = 1 + bound.value * firstReach; ; reach *= 3) {
+      const most = Math.min(this.#most(), bound.value + reach);
+      const lines = this.#listOptions(branch, bound, bounds, most);
+      const packings = mergeLines(lines, choice.limits, bounds, most, this.budget);
+      if (packings) this.offer(packings);
+      if (packings || bound.value + reach > this.#slack()) return;
     }
   }
 
@@ -155,41 +158,45 @@ export class PlanSearch {
   run(): CandidatePlan | null {
     this.#tryPlain();
     const branches = this.#branches();
+    let open: Branch[] = [];
     for (const branch of branches) {
       if (branch.plainValue > this.#slack()) break;
-      const pricing = new LimitPricing(this.model, this.covers, branch.choice, {
-        tried: (packings) => this.offer(packings),
-        enough: () => this.#slack(),
-      });
-      branch.bound = pricing.raise();
+      this.#raise(branch);
+      if (!branch.bound || branch.bound.value > this.#slack()) continue;
+      open.push(branch);
+      // A plan settled early is what lets most of the other choices be dropped unseen.
+      if (open.length === settleAfter) this.#settle(open.sort(byBound).shift() as Branch);
     }
-    const open = branches.filter((branch) => branch.bound !== null);
-    open.sort((a, b) => (a.bound?.value ?? 0) - (b.bound?.value ?? 0));
+    open = open.sort(byBound);
     for (const branch of open) this.#settle(branch);
     return this.best;
   }
+
+  #raise(branch: Branch): void {
+    const { choice } = branch;
+    const pricing = new LimitPricing(this.model, this.covers, choice, {
+      tried: (packings) => this.offer(packings),
+      enough: () => this.#slack(),
+    });
+    branch.bound = pricing.raise(this.memory.get(choice.key));
+    if (branch.bound?.prices.some((price) => price > 0)) this.memory.set(choice.key, branch.bound);
+  }
+}
+
+function byBound(a: Branch, b: Branch): number {
+  return (a.bound?.value ?? Infinity) - (b.bound?.value ?? Infinity);
 }
 
 /** Of one line's options, those that no better one matches in every shared limit. */
-function undominatedOptions(options: Option[]): Option[] {
-  const sorted = options.sort(
-    (a, b) =>
-      a.packing.cost - b.packing.cost ||
-      a.packing.mass - b.packing.mass ||
-      a.packing.packs - b.packing.packs ||
-      compareCountsOf(a, b),
-  );
+function undominatedOptions(options: Option[], budget: Budget): Option[] {
+  options.sort((a, b) => comparePackings(a.packing, b.packing));
   const kept: Option[] = [];
-  for (const option of sorted) {
-    if (!kept.some((other) => other.uses.every((use, d) => use <= (option.uses[d] as number)))) {
-      kept.push(option);
-    }
+  for (const option of options) {
+    const matched = kept.some((other) => {
+      budget.tick();
+      return noMore(other.uses, option.uses);
+    });
+    if (!matched) kept.push(option);
   }
   return kept;
-}
-
-function compareCountsOf(a: Option, b: Option): number {
-  const { counts } = a.packing;
-  const at = counts.findIndex((count, i) => count !== b.packing.counts[i]);
-  return at < 0 ? 0 : (b.packing.counts[at] as number) - (counts[at] as number);
 }

@@ -1,7 +1,7 @@
 import type { Weights } from './coverItems.ts';
 import type { LineCovers } from './lineCovers.ts';
 import type { LineModel, PackModel } from './packModel.ts';
-import { basketOf, type Packing } from './packing.ts';
+import type { Packing } from './packing.ts';
 import type { SharedLimit, TermsChoice } from './termsChoice.ts';
 
 /** A lower bound on every plan under a choice of terms, by pricing its shared limits. */
@@ -12,8 +12,12 @@ export type LimitPrices = {
   value: number;
   /** The cheapest packings at these prices; they needn't keep the limits. */
   packings: Packing[];
+  /** The lines' reduced costs, in their order. */
+  costs: number[];
   /** By how much the packings break each limit; negative where they keep it. */
   excess: number[];
+  /** Whether the bound was raised as far as it would go. */
+  finished: boolean;
 };
 
 /** Tells the search of packings met on the way, and how low a bound is still worth raising. */
@@ -46,38 +50,51 @@ export class LimitPricing {
     return { alpha, beta };
   }
 
-  /** The bound at these prices, or null when some line can't be covered. */
-  at(prices: number[]): LimitPrices | null {
+  /**
+   * The bound at these prices, or null when some line can't be covered.
+   *
+   * @param before the bound at the same prices when some lines needed something else
+   */
+  at(prices: number[], before?: LimitPrices): LimitPrices | null {
     const { covers, choice } = this;
-    const weights = this.#weights(prices);
+    const weights = before?.weights ?? this.#weights(prices);
     const constant = choice.limits.reduce(
       (sum, { limit }, d) => sum - limit * (prices[d] as number),
       choice.shipping,
     );
+    const priced = prices.some((price) => price > 0);
     let value = constant;
     const packings: Packing[] = [];
+    const costs: number[] = [];
     for (const line of this.model.lines) {
-      if (this.#touched.has(line) && prices.some((price) => price > 0)) {
+      const old = before?.packings[line.index];
+      let packing: Packing | null = null;
+      let cost = 0;
+      if (old?.line === line) {
+        packing = old;
+        cost = before?.costs[line.index] as number;
+      } else if (priced && this.#touched.has(line)) {
         const found = covers.reduced(line, choice.allowed, weights);
-        if (!found) return null;
-        value += found.value;
-        packings.push(found.packing);
+        packing = found && found.packing;
+        cost = found ? found.value : 0;
       } else {
-        const packing = covers.best(line, choice.allowed);
-        if (!packing) return null;
-        value += packing.cost;
-        packings.push(packing);
+        packing = covers.best(line, choice.allowed);
+        cost = packing ? packing.cost : 0;
       }
+      if (!packing) return null;
+      value += cost;
+      packings.push(packing);
+      costs.push(cost);
     }
     this.ascent.tried(packings);
     const excess = choice.limits.map((limit) => this.#use(packings, limit) - limit.limit);
-    return { prices, weights, constant, value, packings, excess };
+    return { prices, weights, constant, value, packings, costs, excess, finished: false };
   }
 
   #use(packings: Packing[], { supplier, of, sign }: SharedLimit): number {
     let sum = 0;
-    for (const { line, counts } of packings) {
-      if (this.#touched.has(line)) sum += basketOf(line.items, counts, supplier)[of];
+    for (const { values, masses } of packings) {
+      sum += (of === 'value' ? values : masses)[supplier] as number;
     }
     return sign * sum;
   }
@@ -85,20 +102,31 @@ export class LimitPricing {
   /**
    * Raises the bound limit by limit, then along the subgradient; stops when it is enough to drop
    * this choice of terms.
+   *
+   * @param before what this gave when some lines needed something else
    */
-  raise(): LimitPrices | null {
+  raise(before?: LimitPrices): LimitPrices | null {
     const { limits } = this.choice;
     let best = this.at(limits.map(() => 0));
-    if (!best || best.excess.every((excess) => excess <= 0)) return best;
+    if (!best || best.value > this.ascent.enough()) return best;
+    if (best.excess.every((excess) => excess <= 0)) return best;
+    const again = before && this.at(before.prices, before);
+    if (again && again.value >= best.value) {
+      best = again;
+      if (before.finished || best.value > this.ascent.enough()) {
+        return { ...best, finished: before.finished };
+      }
+    }
     for (let sweep = 0; sweep < 3; sweep++) {
-      const before: number = best.value;
+      const start: number = best.value;
       for (let d = 0; d < limits.length; d++) {
         best = this.#along(d, best);
         if (best.value > this.ascent.enough()) return best;
       }
-      if (limits.length === 1 || best.value - before < 0.5) break;
+      if (limits.length === 1 || best.value - start < 0.5) break;
     }
-    return limits.length === 1 ? best : this.#polish(best);
+    if (limits.length > 1) best = this.#polish(best);
+    return { ...best, finished: best.value <= this.ascent.enough() };
   }
 
   /** The best price of one limit, the others' held: the dual is concave, so cut from both sides. */

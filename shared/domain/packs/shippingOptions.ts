@@ -5,6 +5,8 @@ import type { SupplierModel } from './packModel.ts';
  * option's bounds is then at least as cheap in truth as the option says.
  */
 export type ShippingOption = {
+  /** Names the option among the supplier's. */
+  key: string;
   used: boolean;
   shipping: number;
   leastValue: number;
@@ -13,8 +15,8 @@ export type ShippingOption = {
   mostMass: number;
 };
 
-const open = { leastValue: 0, mostValue: Infinity, leastMass: 0, mostMass: Infinity };
-const unused: ShippingOption = { ...open, used: false, shipping: 0 };
+const open = { key: 'flat', leastValue: 0, mostValue: Infinity, leastMass: 0, mostMass: Infinity };
+const unused: ShippingOption = { ...open, key: 'unused', used: false, shipping: 0 };
 
 function stepOptions({ terms, minimum, free }: SupplierModel): ShippingOption[] {
   const { shipping } = terms;
@@ -30,7 +32,8 @@ function stepOptions({ terms, minimum, free }: SupplierModel): ShippingOption[] 
     const most = upTo ?? Infinity;
     const above = index === 0 ? -1 : (steps[index - 1]?.upTo ?? 0);
     const least = steps.slice(0, index).some((step) => step.minor > minor) ? above + 1 : 0;
-    const option = { ...open, used: true, shipping: minor, leastValue: minimum };
+    const terms = { used: true, shipping: minor, leastValue: minimum };
+    const option = { ...open, ...terms, key: `step ${index}` };
     if (!byValue) return minimum < free ? [{ ...option, leastMass: least, mostMass: most }] : [];
     const empty = most < minimum || above + 1 >= free;
     const leastValue = Math.max(minimum, least);
@@ -58,7 +61,7 @@ export function shippingOptions(supplier: SupplierModel): ShippingOption[] {
   const options = stepOptions(supplier);
   if (supplier.free < Infinity) {
     const leastValue = Math.max(supplier.free, supplier.minimum);
-    options.push({ ...open, used: true, shipping: 0, leastValue });
+    options.push({ ...open, key: 'free', used: true, shipping: 0, leastValue });
   }
   options.push(unused);
   return options.filter(

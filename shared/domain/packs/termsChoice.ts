@@ -11,6 +11,8 @@ export type SharedLimit = {
 
 /** One way in which all shared suppliers' terms turn out together. */
 export type TermsChoice = {
+  /** Names the choice among all of a model. */
+  key: string;
   /** By supplier: whether anything may be bought from it. */
   allowed: boolean[];
   /** By supplier: whether buying beyond the need may pay under this choice. */
@@ -35,16 +37,18 @@ export function termsChoice(
   model: PackModel,
   options: ReadonlyMap<number, ShippingOption>,
 ): TermsChoice {
+  let key = '';
   let shipping = 0;
   const limits: SharedLimit[] = [];
   const padded = model.suppliers.map((supplier) => !supplier.shared && supplier.padded);
   const allowed = model.suppliers.map(() => true);
   for (const [supplier, option] of options) {
+    key += `${option.key} `;
     allowed[supplier] = option.used;
     shipping += option.shipping;
     const own = limitsOf(supplier, option);
     padded[supplier] = own.some((limit) => limit.sign === -1);
     limits.push(...own);
   }
-  return { allowed, padded, shipping, limits };
+  return { key, allowed, padded, shipping, limits };
 }
