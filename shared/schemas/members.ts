@@ -6,8 +6,8 @@ export const MembershipStatus = z.enum(['pending', 'active', 'left', 'removed'])
 export type MembershipStatus = z.infer<typeof MembershipStatus>;
 
 /**
- * Somebody in a club. `email`, `contact` and `balanceMinor` are null for those who may not see them; a positive balance
- * is owed to the club. `lastOf`: roles that nobody else holds.
+ * Somebody in a club. `email`, `contact` and `balanceMinor` are null for those who may not see them. A positive balance
+ * is asked for, a negative one is free credit. `lastOf`: roles that nobody else holds.
  */
 export const Member = z.strictObject({
   id: Id,

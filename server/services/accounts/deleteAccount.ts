@@ -4,13 +4,13 @@ import type { AccountActor } from '../actors.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { endMembership } from '../clubs/endMembership.ts';
 import { lockClub, lockMember } from '../clubs/lockClub.ts';
-import { memberBalances } from '../ledger/balances.ts';
+import { owedOfMember } from '../ledger/owed.ts';
 import { endSessions } from './endSessions.ts';
 import { lockOwnAccount } from './lockOwnAccount.ts';
 
 async function requireNothingOwed(tx: Tx, clubId: string, memberId: string): Promise<void> {
-  const owed = (await memberBalances(clubId, tx)).get(memberId) ?? 0;
-  if (owed <= 0) return;
+  const { openMinor } = await owedOfMember(clubId, memberId, tx);
+  if (openMinor <= 0) return;
   const [club] = await select<{ name: string }>(
     'select name from clubs where id = :clubId',
     { clubId },

@@ -4,11 +4,12 @@ import { disconnectAccount } from '../../sockets/publish.ts';
 import type { By } from '../actorName.ts';
 import { wrongState } from '../problem.ts';
 import { noRoles, requireOthers, setRoles } from './lockClub.ts';
+import { passDrafts } from './passDrafts.ts';
 import { withdrawPledges } from './withdrawPledges.ts';
 
 async function requireNoBuyOfTheirs(tx: Tx, member: Membership): Promise<void> {
   const buys = await select<{ name: string }>(
-    `select name from buys where responsible_id = :memberId and state not in ('settled', 'cancelled') order by created_at`,
+    `select name from buys where responsible_id = :memberId and state not in ('draft', 'settled', 'cancelled') order by created_at`,
     { memberId: member.id },
     tx,
   );
@@ -21,7 +22,7 @@ async function requireNoBuyOfTheirs(tx: Tx, member: Membership): Promise<void> {
 /**
  * Ends a locked membership of a locked club: its roles and parts in running buys go, its pledges in open buys are
  * withdrawn, its sockets close. What it has in locked buys stays.
- * @throws DomainProblem 409 `last_of_role`, or `wrong_state` while the person is responsible for a buy
+ * @throws DomainProblem 409 `last_of_role`, or `wrong_state` while the person is responsible for a buy that was opened
  */
 export async function endMembership(
   tx: Tx,
@@ -31,6 +32,7 @@ export async function endMembership(
 ): Promise<void> {
   await requireOthers(tx, member, noRoles);
   await requireNoBuyOfTheirs(tx, member);
+  await passDrafts(tx, member, by);
   await withdrawPledges(tx, member.id, by);
   for (const table of ['buy_organisers', 'buy_helpers']) {
     await execute(

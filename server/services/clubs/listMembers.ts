@@ -1,9 +1,10 @@
+import type { MemberOwed } from '#shared/domain/ledger/owed.ts';
 import type { MembersReply } from '#shared/schemas/members.ts';
 import { select } from '../../config/database.ts';
 import { canManageMembers, canSeeBalances, canSeeEmails } from '../../policies/clubs.ts';
 import { presentMember, type MemberRow } from '../../presenters/members.ts';
 import type { ClubActor } from '../actors.ts';
-import { memberBalances } from '../ledger/balances.ts';
+import { owedInClub } from '../ledger/owed.ts';
 
 async function findRows(actor: ClubActor): Promise<MemberRow[]> {
   // An organiser sees the addresses of those who pledged in a buy of their own.
@@ -29,9 +30,22 @@ async function findRows(actor: ClubActor): Promise<MemberRow[]> {
   );
 }
 
+/** Standings of those whose balance the actor may see: everyone's, or their own. */
+function findOwed(actor: ClubActor): Promise<Map<string, MemberOwed>> {
+  return canSeeBalances(actor)
+    ? owedInClub(actor.club.id)
+    : owedInClub(actor.club.id, undefined, [actor.membershipId]);
+}
+
+/** What is asked for, or, below zero, the free credit. */
+function openBalance(owed: MemberOwed | undefined): number {
+  if (!owed) return 0;
+  return owed.openMinor > 0 ? owed.openMinor : 0 - owed.creditMinor;
+}
+
 /** Everyone in the club whom the actor may know of, with what they may see of each. */
 export async function listMembers(actor: ClubActor): Promise<MembersReply> {
-  const [rows, balances] = await Promise.all([findRows(actor), memberBalances(actor.club.id)]);
+  const [rows, owed] = await Promise.all([findRows(actor), findOwed(actor)]);
   const may = {
     manage: canManageMembers(actor),
     seeEmails: canSeeEmails(actor),
@@ -50,7 +64,7 @@ export async function listMembers(actor: ClubActor): Promise<MembersReply> {
         you,
         holders,
         seesContact: you || may.seeEmails || row.in_own_buy,
-        balanceMinor: you || may.seeBalances ? (balances.get(row.id) ?? 0) : null,
+        balanceMinor: you || may.seeBalances ? openBalance(owed.get(row.id)) : null,
       });
     }),
   };

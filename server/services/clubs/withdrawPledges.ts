@@ -1,14 +1,13 @@
 import { execute, select, type Tx } from '../../config/database.ts';
+import { publishToBuy } from '../../sockets/publish.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import type { By } from '../actorName.ts';
-import { publishToBuy } from '../../sockets/publish.ts';
+import { requestPlan } from '../sheet/planning.ts';
 
 interface Living {
   id: string;
-  line_id: string;
   wanted_mg: number;
   up_to_mg: number | null;
-  version: number;
 }
 
 async function withdrawFrom(
@@ -18,23 +17,25 @@ async function withdrawFrom(
   by: By,
 ): Promise<void> {
   const pledges = await select<Living>(
-    `select id, line_id, wanted_mg, up_to_mg, version from pledges
+    `select id, wanted_mg, up_to_mg from pledges
      where buy_id = :buyId and membership_id = :membershipId and (wanted_mg > 0 or up_to_mg > 0)
      order by id for update`,
     { buyId: buy.id, membershipId },
     tx,
   );
+  let sheetVersion = 0;
   for (const pledge of pledges) {
-    const [changed] = await select<{ sheet_version: number; version: number }>(
+    const [changed] = await select<{ sheet_version: number }>(
       `with sheet as (
          update buys set sheet_version = sheet_version + 1, updated_at = now() where id = :buyId returning sheet_version)
        update pledges set wanted_mg = 0, up_to_mg = null, version = version + 1, updated_at = now(),
          changed_sheet_version = (select sheet_version from sheet)
-       where id = :id returning changed_sheet_version as sheet_version, version`,
+       where id = :id returning changed_sheet_version as sheet_version`,
       { buyId: buy.id, id: pledge.id },
       tx,
     );
     if (!changed) continue;
+    sheetVersion = changed.sheet_version;
     await writeAudit(tx, {
       clubId: buy.club_id,
       buyId: buy.id,
@@ -44,14 +45,12 @@ async function withdrawFrom(
       before: { wantedMg: pledge.wanted_mg, upToMg: pledge.up_to_mg },
       after: { wantedMg: 0, upToMg: null },
     });
-    tx.afterCommit(() =>
-      publishToBuy(buy.id, 'buy:changed', {
-        buyId: buy.id,
-        kind: 'pledges',
-        sheetVersion: changed.sheet_version,
-      }),
-    );
   }
+  if (pledges.length === 0) return;
+  tx.afterCommit(() => {
+    publishToBuy(buy.id, 'buy:changed', { buyId: buy.id, kind: 'pledges', sheetVersion });
+    requestPlan(buy.id);
+  });
 }
 
 /**

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { select, transact } from '#server/config/database.ts';
+import { execute, select, transact } from '#server/config/database.ts';
 import type { Member } from '#shared/schemas/members.ts';
 import { postTransaction } from '#server/services/ledger/postTransaction.ts';
 import { Buy } from '#server/models/Buy.ts';
@@ -209,6 +209,30 @@ describe('leaving and removal', () => {
       .send({})
       .expect(409);
     expect(body.detail).toContain('Test buy');
+  });
+
+  it('passes a draft to its co-organiser, and discards one that nobody else sees', async () => {
+    const { club, people } = await makeWorld('open');
+    const leaver = await makeMember(club, 'Leaver', ['organiser']);
+    const draft = (name: string) =>
+      Buy.create({ clubId: club.id, name, responsibleId: leaver.membership.id });
+    const [shared, alone] = [await draft('Shared draft'), await draft('Lone draft')];
+    await transact((tx) =>
+      execute(
+        'insert into buy_organisers (buy_id, membership_id) values (:buyId, :memberId)',
+        { buyId: shared.id, memberId: people.organiser.membership.id },
+        tx,
+      ),
+    );
+    await (await leaver.agent()).post(`/api/v1/clubs/${club.slug}/leave`).send({}).expect(200);
+    await shared.reload();
+    await alone.reload();
+    expect(shared).toMatchObject({
+      state: 'draft',
+      responsibleId: people.organiser.membership.id,
+      termsVersion: 2,
+    });
+    expect(alone.state).toBe('cancelled');
   });
 
   it("leaves another club's members alone", async () => {
