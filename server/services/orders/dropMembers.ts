@@ -9,39 +9,12 @@ import { owedOfBuy } from '../ledger/owed.ts';
 import { invalid, wrongState } from '../problem.ts';
 import { expectedShares, nothingBilled, shareChanges } from './expectedShares.ts';
 import { ordersPlaced } from './findOrders.ts';
-import { loadOrderBook, packsBySupplier, type OrderBook } from './orderBook.ts';
+import { loadOrderBook, type OrderBook } from './orderBook.ts';
 import { planWithout, type NewEstimate } from './planAnew.ts';
 import { applyPriceLimit } from './priceLimit.ts';
-import { saveOrder } from './saveOrder.ts';
 import { tellBuyChanged } from './tellBuy.ts';
 import { tellDropped } from './tellDropped.ts';
 import { nameSome } from './whoWaits.ts';
-
-/** Orders that aren't placed follow the new plan; a pack that stays keeps the price it was quoted. */
-async function replanDrafts(
-  buyId: string,
-  before: OrderBook,
-  estimate: NewEstimate,
-  tx: Tx,
-): Promise<void> {
-  const planned = packsBySupplier(before.terms, estimate.plan);
-  for (const order of before.orders) {
-    if (order.version === 0 || order.state !== 'draft') continue;
-    const quoted = new Map(order.packs.map(({ offerId, priceMinor }) => [offerId, priceMinor]));
-    await saveOrder(
-      buyId,
-      order,
-      {
-        packs: (planned.get(order.supplierId) ?? []).map((pack) => ({
-          ...pack,
-          priceMinor: quoted.get(pack.offerId) ?? pack.priceMinor,
-        })),
-        shippingMinor: estimate.plan.shippingBySupplier[order.supplierId] ?? 0,
-      },
-      tx,
-    );
-  }
-}
 
 /**
  * Takes members out of a locked buy under its lock, with the estimate computed for the others. Nobody is asked for more
@@ -103,7 +76,6 @@ export async function dropUnderLock(
     },
     tx,
   );
-  await replanDrafts(buy.id, before, drop.estimate, tx);
   const after = await loadOrderBook(buy.id, tx);
   const newShares = expectedShares(after, nothingBilled);
   await applyPriceLimit(buy, club, after, newShares, tx);

@@ -25,6 +25,7 @@ interface OrderRow {
   packs: OrderPack[];
   shipping_minor: number;
   quoted_at: Date | null;
+  quote_stands: boolean;
   reference: string;
   note: string;
   placed_on: string | null;
@@ -69,6 +70,26 @@ async function loadMembers(buyId: string, tx?: Tx): Promise<Map<string, BookMemb
   return new Map(rows.map((row) => [row.id, row]));
 }
 
+/** A draft follows the plan; prices quoted since the lock stay with their packs, and a quoted shipping with the very order. */
+function draftOf(
+  row: OrderRow,
+  planned: readonly OrderPack[],
+  plannedShippingMinor: number,
+): Pick<BookOrder, 'packs' | 'shippingMinor'> {
+  if (!row.quote_stands) return { packs: planned, shippingMinor: plannedShippingMinor };
+  const quoted = new Map(row.packs.map((pack) => [pack.offerId, pack]));
+  const same =
+    planned.length === row.packs.length &&
+    planned.every((pack) => quoted.get(pack.offerId)?.packs === pack.packs);
+  return {
+    packs: planned.map((pack) => ({
+      ...pack,
+      priceMinor: quoted.get(pack.offerId)?.priceMinor ?? pack.priceMinor,
+    })),
+    shippingMinor: same ? row.shipping_minor : plannedShippingMinor,
+  };
+}
+
 async function loadOrders(
   buyId: string,
   terms: SheetTerms,
@@ -76,9 +97,10 @@ async function loadOrders(
   tx?: Tx,
 ): Promise<BookOrder[]> {
   const rows = await select<OrderRow>(
-    `select o.id, o.supplier_id, o.state, o.version, o.packs, o.shipping_minor, o.quoted_at, o.reference, o.note,
+    `select o.id, o.supplier_id, o.state, o.version, o.packs, o.shipping_minor, o.quoted_at,
+        coalesce(o.quoted_at >= b.locked_at, false) as quote_stands, o.reference, o.note,
         o.placed_on, m.display_name as placed_by
-     from supplier_orders o left join memberships m on m.id = o.placed_by_id where o.buy_id = :buyId`,
+     from supplier_orders o join buys b on b.id = o.buy_id left join memberships m on m.id = o.placed_by_id where o.buy_id = :buyId`,
     { buyId },
     tx,
   );
@@ -110,14 +132,18 @@ async function loadOrders(
           placedBy: null,
         };
       }
+      const { packs, shippingMinor } =
+        row.state === 'draft'
+          ? draftOf(row, planned.get(supplierId) ?? [], plan.shippingBySupplier[supplierId] ?? 0)
+          : { packs: row.packs, shippingMinor: row.shipping_minor };
       return {
         id: row.id,
         supplierId,
         state: row.state,
         version: row.version,
-        packs: row.packs,
-        shippingMinor: row.shipping_minor,
-        quotedAt: row.quoted_at,
+        packs,
+        shippingMinor,
+        quotedAt: row.quote_stands ? row.quoted_at : null,
         reference: row.reference,
         note: row.note,
         placedOn: row.placed_on,
