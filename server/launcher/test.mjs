@@ -4,7 +4,7 @@ import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { cleanEnvironment } from './cleanEnvironment.mjs';
-import { onEnd, runCommand } from './command.mjs';
+import { isEnding, onEnd, runCommand } from './command.mjs';
 import { startThrowAway } from './postgres/throwAway.mjs';
 import { endGroup, exitCode } from './processes.mjs';
 import { inProject, projectFolder } from './project.mjs';
@@ -30,7 +30,9 @@ await runCommand(async () => {
     env: { ...cleanEnvironment(), TEST_DATABASE_URL: url },
   });
   onEnd(() => endGroup(child));
-  const { line, remarks, ok } = summarise(report, await exitCode(child));
+  const code = await exitCode(child);
+  if (isEnding()) return 1;
+  const { line, remarks, ok } = summarise(report, code);
   for (const remark of remarks) say(remark);
   say(line);
   return ok ? 0 : 1;
