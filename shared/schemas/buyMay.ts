@@ -22,6 +22,10 @@ export const BuyMay = z.strictObject({
   /** Whether the club bears what was lost above 2 %. */
   takeLoss: z.boolean(),
   handOn: z.boolean(),
+  seePayments: z.boolean(),
+  /** Quotes, orders with suppliers, bills. */
+  order: z.boolean(),
+  settle: z.boolean(),
   seeNotices: z.boolean(),
   writeNotices: z.boolean(),
 });

@@ -2,7 +2,9 @@ import type { BuyState } from '#shared/domain/buys/states.ts';
 import type { BuyMay } from '#shared/schemas/buyMay.ts';
 import type { BuyStanding } from '../../policies/actor.ts';
 import * as buys from '../../policies/buys.ts';
+import * as ledger from '../../policies/ledger.ts';
 import * as notices from '../../policies/notices.ts';
+import * as orders from '../../policies/orders.ts';
 import * as splits from '../../policies/splits.ts';
 
 /** Facts of the buy that an act depends on besides its state. */
@@ -47,6 +49,9 @@ export function mayWithBuy(actor: BuyStanding, facts: MayFacts): BuyMay {
     takeLoss: splits.canTakeLoss(actor) && isIn('arrived', 'splitting'),
     seeNotices: notices.canReadDeliveries(actor) && facts.opened,
     writeNotices: notices.canSendNotices(actor) && facts.opened,
+    seePayments: ledger.canSeePaymentsOfBuy(actor) && facts.opened,
+    order: orders.canOrder(actor) && isIn('locked', 'ordered', 'arrived', 'splitting', 'pickup'),
+    settle: orders.canCloseBuy(actor) && isIn('pickup'),
     handOn: buys.canHandOn(actor) && isIn('locked', 'ordered', 'arrived', 'splitting', 'pickup'),
   };
 }

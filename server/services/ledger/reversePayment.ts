@@ -7,6 +7,7 @@ import { forbidden, notFound, wrongState } from '../problem.ts';
 import { clubToday } from './clubDay.ts';
 import { findPayments } from './findPayments.ts';
 import { reverseTransaction, transactionsOf } from './reverseTransaction.ts';
+import { tellPaymentPages } from './tellPayers.ts';
 import { tellReversal } from './tellPayment.ts';
 
 interface PaymentState {
@@ -61,6 +62,7 @@ async function reverse(
         private: { member: payment.member.name, amountMinor: payment.amountMinor },
       },
     });
+    await tellPaymentPages(payment, tx);
     if (row.confirmed_at) await tellReversal(club, payment, reason, tx);
     return payment;
   });

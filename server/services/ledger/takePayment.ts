@@ -11,6 +11,7 @@ import { findPayments } from './findPayments.ts';
 import { lockMember } from './lockMember.ts';
 import { owedOfMember } from './owed.ts';
 import { postTransaction, type LedgerAccountRef } from './postTransaction.ts';
+import { tellPaymentPages } from './tellPayers.ts';
 
 export interface PaymentFacts {
   readonly key: string;
@@ -136,5 +137,6 @@ export async function takePayment(
   });
   const [payment] = await findPayments(club.id, 'id', row.id, tx);
   if (!payment) throw new Error('payment missing');
+  await tellPaymentPages(payment, tx);
   return { payment, fresh: true };
 }
