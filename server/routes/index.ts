@@ -10,6 +10,7 @@ import { buyPeopleRoutes } from './buyPeople.ts';
 import { buysRoutes } from './buys.ts';
 import { buyTermsRoutes } from './buyTerms.ts';
 import { clubsRoutes } from './clubs.ts';
+import { handOnsRoutes } from './handOns.ts';
 import { invitationsRoutes } from './invitations.ts';
 import { ledgerRoutes } from './ledger.ts';
 import { membersRoutes } from './members.ts';
@@ -17,6 +18,7 @@ import { offerImportRoutes } from './offerImport.ts';
 import { noticesRoutes } from './notices.ts';
 import { ordersRoutes } from './orders.ts';
 import { outboxRoutes } from './outbox.ts';
+import { pickupRoutes } from './pickup.ts';
 import { saltsRoutes } from './salts.ts';
 import { sessionRoutes } from './session.ts';
 import { sheetRoutes } from './sheet.ts';
@@ -38,9 +40,11 @@ export const allRoutes: readonly RouteDef[] = [
   ...auditRoutes,
   ...outboxRoutes,
   ...noticesRoutes,
+  ...pickupRoutes,
   ...buysRoutes,
   ...buyTermsRoutes,
   ...buyPeopleRoutes,
+  ...handOnsRoutes,
   ...sheetRoutes,
   ...ledgerRoutes,
   ...ordersRoutes,
