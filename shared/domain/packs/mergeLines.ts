@@ -1,4 +1,5 @@
 import type { Budget } from './clock.ts';
+import { Front } from './front.ts';
 import type { Item } from './packModel.ts';
 import type { Packing } from './packing.ts';
 import type { SharedLimit } from './termsChoice.ts';
@@ -23,7 +24,7 @@ type State = {
 };
 
 /** What a packing uses of a shared limit. */
-function useOf(packing: Packing, { supplier, of, sign }: SharedLimit): number {
+export function useOf(packing: Packing, { supplier, of, sign }: SharedLimit): number {
   return sign * ((of === 'value' ? packing.values : packing.masses)[supplier] as number);
 }
 
@@ -84,38 +85,6 @@ function compareOffers(a: State, b: State): number {
 function compareStates(a: State, b: State): number {
   const known = a.cost - b.cost || a.mass - b.mass || a.packs - b.packs;
   return known !== 0 || a === b ? known : compareOffers(a, b);
-}
-
-/** Keeps the states that no better one matches in every shared limit. */
-function undominated(states: State[], limits: number, budget: Budget): State[] {
-  states.sort(compareStates);
-  if (limits === 0) return states.slice(0, 1);
-  const kept: State[] = [];
-  let least = Infinity;
-  for (const state of states) {
-    budget.tick();
-    const use = state.uses[0] as number;
-    if (limits === 1) {
-      if (use >= least) continue;
-      least = use;
-    } else if (matched(kept, state, budget)) continue;
-    kept.push(state);
-  }
-  return kept;
-}
-
-function matched(kept: State[], state: State, budget: Budget): boolean {
-  for (const other of kept) {
-    budget.tick();
-    if (noMore(other.uses, state.uses)) return true;
-  }
-  return false;
-}
-
-/** Whether `a` uses no more than `b` of any shared limit. */
-export function noMore(a: number[], b: number[]): boolean {
-  for (let d = 0; d < a.length; d++) if ((a[d] as number) > (b[d] as number)) return false;
-  return true;
 }
 
 /** For each line on, what the lines from there must and may use, and must cost. */
@@ -187,7 +156,8 @@ export function mergeLines(
         if (state) next.push(state);
       }
     }
-    states = undominated(next, limits.length, budget);
+    const front = new Front(limits.length, budget);
+    states = next.sort(compareStates).filter((state) => front.add(state.uses));
   });
   const best = states.sort(compareStates)[0];
   return best ? chain(best).sort((a, b) => a.line.index - b.line.index) : null;

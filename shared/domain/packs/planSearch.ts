@@ -1,22 +1,23 @@
 import { candidatePlan, comparePlans, type CandidatePlan } from './candidatePlan.ts';
 import type { Budget } from './clock.ts';
-import { LineCovers, plainWeights } from './lineCovers.ts';
-import { listCovers } from './listCovers.ts';
-import { makeOption, mergeLines, noMore, type Option, type PlanBound } from './mergeLines.ts';
+import type { LineCovers } from './lineCovers.ts';
 import type { PackModel } from './packModel.ts';
-import { comparePackings, type Packing } from './packing.ts';
+import type { Packing } from './packing.ts';
 import { LimitPricing, type LimitPrices } from './priceLimits.ts';
+import { quickPlans } from './quickPlans.ts';
+import { settleChoice } from './settleChoice.ts';
 import { shippingOptions, type ShippingOption } from './shippingOptions.ts';
 import { termsChoice, type TermsChoice } from './termsChoice.ts';
 
-/** A choice of terms that may still hold the best plan. */
-type Branch = { choice: TermsChoice; plainValue: number; bound: LimitPrices | null };
-
-/** How far above its bound a choice's plans are first looked for, as a share. */
-const firstReach = 0.0005;
+/** A choice of terms that may hold the best plan, by what it costs at least. */
+type Branch = { choice: TermsChoice; plainValue: number };
+type Bounded = Branch & { bound: LimitPrices };
 
 /** How many choices of terms are bounded before the first is settled. */
 const settleAfter = 4;
+
+/** Above so many choices of terms they are bounded supplier by supplier instead of listed. */
+const mostListed = 5000;
 
 /** Searches the best plan of a model exactly: each way the suppliers' terms can turn out, bounded. */
 export class PlanSearch {
@@ -44,14 +45,26 @@ export class PlanSearch {
     this.best = plan;
   }
 
-  /** What a plan may cost at most to be of interest. */
-  #most(): number {
-    return this.best ? Math.min(this.best.cost, this.guess) : this.guess;
+  /**
+   * Looks for the best plan; what it returns is proven best if it costs no more than the guess.
+   *
+   * @throws OutOfTime with the best plan so far in `best`
+   */
+  run(): CandidatePlan | null {
+    quickPlans(this.model, this.covers, (packings) => this.offer(packings));
+    const all = this.model.suppliers.map(() => true);
+    const goods = this.#plainValue(all);
+    if (goods === Infinity) return null;
+    const choices = this.#options.reduce((product, [, ways]) => product * ways.length, 1);
+    if (choices > mostListed) this.#dive(0, new Map());
+    else this.#list(goods);
+    return this.best;
   }
 
-  #slack(): number {
-    const most = this.#most();
-    return most === Infinity ? Infinity : most + 1e-6 + 1e-8 * most;
+  /** What a plan may cost at most to be of interest. */
+  #most(): number {
+    const most = this.best ? Math.min(this.best.cost, this.guess) : this.guess;
+    return most + 1e-6 + 1e-8 * most;
   }
 
   #plainValue(allowed: readonly boolean[]): number {
@@ -64,17 +77,32 @@ export class PlanSearch {
     return sum;
   }
 
+  /** Bounds the choices of terms, cheapest first, and settles those within reach. */
+  #list(goods: number): void {
+    let open: Bounded[] = [];
+    for (const branch of this.#branches(goods)) {
+      if (branch.plainValue > this.#most()) break;
+      const bound = this.#raise(branch.choice);
+      if (!bound) continue;
+      open.push({ ...branch, bound });
+      // A plan settled early is what lets most of the other choices be dropped unseen.
+      if (open.length === settleAfter) this.#settle(open.sort(byBound).shift() as Bounded);
+    }
+    open = open.sort(byBound);
+    for (const branch of open) this.#settle(branch);
+  }
+
   /** All choices of terms whose plain bound is within reach, cheapest first. */
-  #branches(): Branch[] {
+  #branches(allGoods: number): Branch[] {
     const branches: Branch[] = [];
     const options = new Map<number, ShippingOption>();
     const walk = (at: number, shipping: number, goods: number): void => {
       this.budget.tick();
-      if (goods + shipping > this.#slack()) return;
+      if (goods + shipping > this.#most()) return;
       const entry = this.#options[at];
       if (!entry) {
         const choice = termsChoice(this.model, options);
-        branches.push({ choice, plainValue: goods + shipping, bound: null });
+        branches.push({ choice, plainValue: goods + shipping });
         return;
       }
       const [supplier, ways] = entry;
@@ -85,118 +113,47 @@ export class PlanSearch {
       }
       options.delete(supplier);
     };
-    const all = this.model.suppliers.map(() => true);
-    const goods = this.#plainValue(all);
-    if (goods < Infinity) walk(0, 0, goods);
+    walk(0, 0, allGoods);
     return branches.sort((a, b) => a.plainValue - b.plainValue);
   }
 
-  /** Plans that ignore the suppliers' terms but happen to meet them. */
-  #tryPlain(): void {
-    const suppliers = this.#options.map(([supplier]) => supplier);
-    const sets = Math.min(2 ** suppliers.length, 64);
-    for (let set = 0; set < sets; set++) {
-      const allowed = this.model.suppliers.map(() => true);
-      suppliers.forEach((supplier, bit) => {
-        if ((set >> bit) & 1) allowed[supplier] = false;
-      });
-      const packings = this.model.lines.map((line) => this.covers.best(line, allowed));
-      if (packings.every((packing) => packing !== null)) this.offer(packings);
+  /** Chooses the terms supplier by supplier; those not chosen yet ship anything for nothing. */
+  #dive(at: number, options: Map<number, ShippingOption>): void {
+    const choice = termsChoice(this.model, options);
+    const bound = this.#raise(choice);
+    if (!bound) return;
+    const entry = this.#options[at];
+    if (!entry) return this.#settle({ choice, plainValue: 0, bound });
+    const [supplier, ways] = entry;
+    for (const way of [...ways].sort((a, b) => a.shipping - b.shipping)) {
+      options.set(supplier, way);
+      this.#dive(at + 1, options);
     }
+    options.delete(supplier);
   }
 
-  #bounds(branch: Branch, bound: LimitPrices): PlanBound[] {
-    const { choice } = branch;
-    const plain = { weights: plainWeights(this.model.suppliers.length), constant: choice.shipping };
-    const priced = bound.prices.some((price) => price > 0);
-    return priced ? [plain, { weights: bound.weights, constant: bound.constant }] : [plain];
-  }
-
-  /** Every packing of every line that a plan of at most so much can hold. */
-  #listOptions(branch: Branch, bound: LimitPrices, bounds: PlanBound[], most: number) {
-    const { choice, plainValue } = branch;
-    const values = [plainValue, bound.value];
-    return this.model.lines.map((line, index): Option[] => {
-      const plain = this.covers.best(line, choice.allowed) as Packing;
-      const least = [plain.cost, bound.costs[index] as number];
-      const limits = bounds.map(({ weights }, k) => ({
-        weights,
-        most: (least[k] as number) + (most - (values[k] as number)),
-      }));
-      const { suppliers } = this.model;
-      const { allowed, padded } = choice;
-      const found = listCovers(line, suppliers, allowed, padded, limits, this.budget);
-      const options = found.map((packing) => makeOption(packing, choice.limits, bounds));
-      return undominatedOptions(options, this.budget);
-    });
-  }
-
-  /** Finds the best plan under one choice of terms, if it is within reach. */
-  #settle(branch: Branch): void {
-    const { bound, choice } = branch;
-    if (!bound || bound.value > this.#slack()) return;
-    if (bound.prices.every((price) => price === 0) && bound.excess.every((x) => x <= 0)) {
-      this.offer(bound.packings);
-      return;
-    }
-    const bounds = this.#bounds(branch, bound);
-    // Lists grow steeply with the reach, so it starts short and grows until a plan is within it.
-    for (let reach = 1 + bound.value * firstReach; ; reach *= 3) {
-      const most = Math.min(this.#most(), bound.value + reach);
-      const lines = this.#listOptions(branch, bound, bounds, most);
-      const packings = mergeLines(lines, choice.limits, bounds, most, this.budget);
-      if (packings) this.offer(packings);
-      if (packings || bound.value + reach > this.#slack()) return;
-    }
-  }
-
-  /**
-   * Looks for the best plan; what it returns is proven best if it costs no more than the guess.
-   *
-   * @throws OutOfTime with the best plan so far in `best`
-   */
-  run(): CandidatePlan | null {
-    this.#tryPlain();
-    const branches = this.#branches();
-    let open: Branch[] = [];
-    for (const branch of branches) {
-      if (branch.plainValue > this.#slack()) break;
-      this.#raise(branch);
-      if (!branch.bound || branch.bound.value > this.#slack()) continue;
-      open.push(branch);
-      // A plan settled early is what lets most of the other choices be dropped unseen.
-      if (open.length === settleAfter) this.#settle(open.sort(byBound).shift() as Branch);
-    }
-    open = open.sort(byBound);
-    for (const branch of open) this.#settle(branch);
-    return this.best;
-  }
-
-  #raise(branch: Branch): void {
-    const { choice } = branch;
+  /** The bound of a choice of terms, or null when it is out of reach. */
+  #raise(choice: TermsChoice): LimitPrices | null {
     const pricing = new LimitPricing(this.model, this.covers, choice, {
       tried: (packings) => this.offer(packings),
-      enough: () => this.#slack(),
+      enough: () => this.#most(),
     });
-    branch.bound = pricing.raise(this.memory.get(choice.key));
-    if (branch.bound?.prices.some((price) => price > 0)) this.memory.set(choice.key, branch.bound);
+    const bound = pricing.raise(this.memory.get(choice.key));
+    if (!bound) return null;
+    const priced = bound.prices.some((price) => price > 0);
+    if (priced && this.memory.size < mostListed) this.memory.set(choice.key, bound);
+    return bound.value <= this.#most() ? bound : null;
+  }
+
+  #settle({ choice, bound }: Bounded): void {
+    const most = this.#most();
+    if (bound.value > most) return;
+    const { model, covers, budget } = this;
+    const packings = settleChoice({ model, covers, budget, choice, bound }, most);
+    if (packings) this.offer(packings);
   }
 }
 
-function byBound(a: Branch, b: Branch): number {
-  return (a.bound?.value ?? Infinity) - (b.bound?.value ?? Infinity);
-}
-
-/** Of one line's options, those that no better one matches in every shared limit. */
-function undominatedOptions(options: Option[], budget: Budget): Option[] {
-  options.sort((a, b) => comparePackings(a.packing, b.packing));
-  const kept: Option[] = [];
-  for (const option of options) {
-    const matched = kept.some((other) => {
-      budget.tick();
-      return noMore(other.uses, option.uses);
-    });
-    if (!matched) kept.push(option);
-  }
-  return kept;
+function byBound(a: Bounded, b: Bounded): number {
+  return a.bound.value - b.bound.value;
 }

@@ -56,7 +56,7 @@ export class LimitPricing {
    * @param before the bound at the same prices when some lines needed something else
    */
   at(prices: number[], before?: LimitPrices): LimitPrices | null {
-    const { covers, choice } = this;
+    const { choice } = this;
     const weights = before?.weights ?? this.#weights(prices);
     const constant = choice.limits.reduce(
       (sum, { limit }, d) => sum - limit * (prices[d] as number),
@@ -68,19 +68,10 @@ export class LimitPricing {
     const costs: number[] = [];
     for (const line of this.model.lines) {
       const old = before?.packings[line.index];
-      let packing: Packing | null = null;
-      let cost = 0;
-      if (old?.line === line) {
-        packing = old;
-        cost = before?.costs[line.index] as number;
-      } else if (priced && this.#touched.has(line)) {
-        const found = covers.reduced(line, choice.allowed, weights);
-        packing = found && found.packing;
-        cost = found ? found.value : 0;
-      } else {
-        packing = covers.best(line, choice.allowed);
-        cost = packing ? packing.cost : 0;
-      }
+      const [packing, cost] =
+        old?.line === line
+          ? [old, before?.costs[line.index] as number]
+          : this.#cheapest(line, weights, priced);
       if (!packing) return null;
       value += cost;
       packings.push(packing);
@@ -89,6 +80,16 @@ export class LimitPricing {
     this.ascent.tried(packings);
     const excess = choice.limits.map((limit) => this.#use(packings, limit) - limit.limit);
     return { prices, weights, constant, value, packings, costs, excess, finished: false };
+  }
+
+  #cheapest(line: LineModel, weights: Weights, priced: boolean): [Packing | null, number] {
+    const { covers, choice } = this;
+    if (priced && this.#touched.has(line)) {
+      const found = covers.reduced(line, choice.allowed, weights);
+      return [found && found.packing, found ? found.value : 0];
+    }
+    const packing = covers.best(line, choice.allowed);
+    return [packing, packing ? packing.cost : 0];
   }
 
   #use(packings: Packing[], { supplier, of, sign }: SharedLimit): number {
