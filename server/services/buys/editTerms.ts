@@ -6,6 +6,7 @@ import { publishToBuy } from '../../sockets/publish.ts';
 import type { BuyActor } from '../actors.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
+import { requestPlan } from '../sheet/planning.ts';
 import { openSums, type OpenSums } from './openEffect.ts';
 import { readBuyHeaderAgain } from './readBuys.ts';
 import { readTerms } from './readTerms.ts';
@@ -127,10 +128,11 @@ export async function editTerms(
           ...(edit.after ? { after: edit.after } : {}),
         });
         await tellPledgers(actor, buy, edit, to, { before, after }, tx);
-        const { id: buyId, sheetVersion } = buy;
-        tx.afterCommit(() =>
-          publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion }),
-        );
+        const { id: buyId, sheetVersion, state } = buy;
+        tx.afterCommit(() => {
+          publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion });
+          if (state === 'open') requestPlan(buyId);
+        });
       },
     );
   } catch (error) {

@@ -6,6 +6,7 @@ import type { BuyActor } from '../actors.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
 import { invalid } from '../problem.ts';
+import { requestPlan } from '../sheet/planning.ts';
 import { buyPath } from './editTerms.ts';
 import { readBuyHeaderAgain } from './readBuys.ts';
 import { readTermsIn } from './readTerms.ts';
@@ -96,15 +97,16 @@ export async function openBuy(actor: BuyActor, termsVersion: number): Promise<Bu
       tx,
     );
     const { id: buyId, sheetVersion } = buy;
-    tx.afterCommit(() =>
+    tx.afterCommit(() => {
       publishToBuy(buyId, 'buy:changed', {
         kind: 'state',
         buyId,
         sheetVersion,
         state: 'open',
         frozen: false,
-      }),
-    );
+      });
+      requestPlan(buyId);
+    });
   });
   return readBuyHeaderAgain(actor, actor.buy.id);
 }

@@ -46,6 +46,8 @@ export function explainStep({ code, values }: ShareStep, currency: string): stri
     case 'lineTax':
     case 'chargeTax':
       return `tax at ${percent(Number(values['ratePpm']))} contained in ${money('minor')}: ${money('taxMinor')}`;
+    case 'handedOn':
+      return `${g('mg')} handed on by agreement: ${money('minor')}`;
     default:
       return `in total: ${money('minor')}`;
   }

@@ -39,8 +39,12 @@ const pageOfNext: Readonly<Record<string, string>> = {
 /** The route's name for a next step's page, or null when nothing is left to do. */
 export const pageOfNextStep = (code: string): string | null => pageOfNext[code] ?? null;
 
-/** Who prepares a step looks at its page one state early: orders are placed while locked, books closed at pickup. */
-const prepared: Partial<Record<BuyState, BuyState>> = { ordered: 'locked', settled: 'pickup' };
+/** Who prepares a step looks at its page one state early: orders are placed while locked, bags counted while ordered. */
+const prepared: Partial<Record<BuyState, BuyState>> = {
+  ordered: 'locked',
+  arrived: 'ordered',
+  settled: 'pickup',
+};
 
 /** Whether this reader has something to see on the page of a state. */
 export function canLookAt(state: BuyState, head: BuyHeader, treasurer: boolean): boolean {
