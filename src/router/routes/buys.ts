@@ -17,6 +17,18 @@ export const buysRoutes: RouteRecordRaw[] = [
     // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
     children: [
       {
+        path: 'arrived',
+        name: 'buy-arrived',
+        component: () => import('src/pages/buys/BuyArrivedPage.vue'),
+        props: true,
+      },
+      {
+        path: 'split',
+        name: 'buy-split',
+        component: () => import('src/pages/buys/BuySplitPage.vue'),
+        props: true,
+      },
+      {
         path: 'notices',
         name: 'buy-notices',
         component: () => import('src/pages/buys/BuyNoticesPage.vue'),
