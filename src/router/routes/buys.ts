@@ -17,6 +17,12 @@ export const buysRoutes: RouteRecordRaw[] = [
     // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
     children: [
       {
+        path: 'sheet',
+        name: 'buy-sheet',
+        component: () => import('src/pages/buys/BuySheetPage.vue'),
+        props: true,
+      },
+      {
         path: 'arrived',
         name: 'buy-arrived',
         component: () => import('src/pages/buys/BuyArrivedPage.vue'),
