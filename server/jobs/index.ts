@@ -1,6 +1,7 @@
 import { logger } from '../config/logger.ts';
 import { closingJob, closingSoonJob, planJob } from './closing.ts';
 import { eraseExpiredJob } from './eraseExpired.ts';
+import { eraseRecordsJob, remindUnclaimedJob } from './pickup.ts';
 import { remindDuesJob } from './remindDues.ts';
 import { sendMail } from './sendMail.ts';
 
@@ -18,6 +19,8 @@ const jobs: readonly Job[] = [
   closingSoonJob,
   planJob,
   remindDuesJob,
+  remindUnclaimedJob,
+  eraseRecordsJob,
 ];
 
 /** Starts all jobs; the returned function lets running ones finish and starts no more. */
