@@ -111,6 +111,8 @@ export const BuyHeader = z.strictObject({
     takesCash: z.boolean(),
     takesPart: z.boolean(),
     wantedMg: MilligramsField,
+    /** Lines that others offer to hand on to the viewer. */
+    offeredLines: z.int(),
     owedMinor: MinorField.nullable(),
   }),
   changes: z.array(TermsChange),

@@ -77,6 +77,7 @@ export function presentBuyHeader(
       takesCash,
       takesPart,
       wantedMg: row.mine_mg,
+      offeredLines: row.offered_lines,
       owedMinor: hasReached(row.state, 'locked') ? money.myOpenMinor : null,
     },
     changes: changes.map((change) => ({

@@ -57,6 +57,8 @@ export interface BuyFactsRow {
   /** Who need not pay before the orders: vouched for, or dropped. */
   vouched_for: string[];
   unconfirmed_bills: number;
+  /** Lines that others offer to hand on to the viewer. */
+  offered_lines: number;
   portions: number;
   portions_done: number;
   shares_waiting: number;

@@ -9,6 +9,7 @@ const columns = `b.*, r.display_name as responsible_name, ot.display_name as off
     select 1 from buy_organisers o where o.buy_id = b.id and o.membership_id = :me)) as organises,
   m.over_limit, m.must_agree, m.collected, m.vouched_for,
   (select count(*)::int from bills x where x.buy_id = b.id and x.confirmed_at is null and x.voided_at is null) as unconfirmed_bills,
+  (select count(*)::int from hand_ons h where h.buy_id = b.id and h.to_id = :me and h.state = 'offered') as offered_lines,
   s.portions, s.portions_done, s.shares_waiting`;
 
 const joins = `from buys b
