@@ -1,6 +1,6 @@
 // `npm run pictures`: takes the README's pictures from a demo that is started for it and thrown away.
 import { spawn } from 'node:child_process';
-import { mkdtempSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { setTimeout as pause } from 'node:timers/promises';
@@ -42,6 +42,8 @@ await runCommand(async () => {
   await setUp({ debian: ['postgresql', 'chromium'] });
   const folder = mkdtempSync(join(tmpdir(), 'tarewell-pictures-'));
   onEnd(() => rmSync(folder, { recursive: true, force: true }));
+  // Where root's PostgreSQL can enter, its files go with the folder.
+  chmodSync(folder, 0o711);
   let url;
   await step('Starting a demo', async () => {
     url = await startDemo(folder);

@@ -1,11 +1,18 @@
-import { mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, readdirSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { setTimeout as pause } from 'node:timers/promises';
 import { afterAll, expect, it } from 'vitest';
 import { runToEnd, start } from './launcher.ts';
 
-const data = mkdtempSync(path.join(tmpdir(), 'tarewell-start-'));
+/** Root's PostgreSQL, which runs as another account, can enter it, so that its files go with it. */
+function makeFolder() {
+  const folder = mkdtempSync(path.join(tmpdir(), 'tarewell-start-'));
+  chmodSync(folder, 0o711);
+  return folder;
+}
+
+const data = makeFolder();
 afterAll(() => rmSync(data, { recursive: true, force: true }));
 
 const env = { TAREWELL_DATA: data, TAREWELL_DEMO: '0', LOG_LEVEL: 'warn' };
@@ -64,7 +71,7 @@ it('starts, says who has the folder, survives being killed, keeps its data, stop
 it('takes the port that it is told, or says that it is taken', async () => {
   const first = await startReady();
   const { port } = new URL(first.url);
-  const other = mkdtempSync(path.join(tmpdir(), 'tarewell-start-'));
+  const other = makeFolder();
   const { code, output } = await runToEnd('start.mjs', {
     ...env,
     TAREWELL_DATA: other,
