@@ -25,7 +25,10 @@ export const SessionReply = z.strictObject({
 });
 export type SessionReply = z.infer<typeof SessionReply>;
 
-export const SignInBody = z.strictObject({ email: Email, password: z.string().min(1).max(1000) });
+export const SignInBody = z.strictObject({
+  email: Email,
+  password: z.string().min(1, 'Write your password.').max(1000),
+});
 export type SignInBody = z.infer<typeof SignInBody>;
 
 /** One-click demo sign-in; exists only in demo mode. */

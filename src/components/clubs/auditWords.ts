@@ -38,17 +38,32 @@ export function sayAct(action: string): string {
 /** Whether the subject's name follows the act. */
 export const namesSubject = (action: string) => !ofOneself.has(action);
 
+const keys: Record<string, string> = {
+  note: 'What the club is',
+  placeAddress: 'Meetup place',
+  placeNote: 'Note on the place',
+  transferHow: 'How to pay by transfer',
+  joinNeedsApproval: 'A steward answers who joins',
+  hideReportableGrams: 'Only totals of reportable salts',
+  precursorMonths: 'Months that records are kept',
+  shelfLimitMinor: "The shelf's share at most",
+  displayName: 'Name',
+};
+
 /** 'Wanted', 'Closes at': the key without its unit. */
 export function sayKey(key: string): string {
+  if (keys[key]) return keys[key];
   const words = spaced(key.replace(/(Mg|Minor|Ppm|Id)$/, ''));
   return words.charAt(0).toUpperCase() + words.slice(1);
 }
+
+const isEmpty = (value: unknown) => value === null || value === undefined || value === '';
 
 const isInstant = (value: string) => /^\d{4}-\d\d-\d\dT[\d:.]+Z$/.test(value);
 
 /** A value as a person reads it, by its type and by the unit that its key carries. */
 export function sayValue(key: string, value: unknown, format: Format): string {
-  if (value === null || value === undefined || value === '') return '–';
+  if (isEmpty(value)) return '–';
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
   if (typeof value === 'number') {
     if (key.endsWith('Mg')) return format.mass(value);
@@ -58,7 +73,13 @@ export function sayValue(key: string, value: unknown, format: Format): string {
   }
   if (typeof value === 'string') return isInstant(value) ? format.dateTime(value) : value;
   if (Array.isArray(value)) return value.map((one) => sayValue(key, one, format)).join(', ') || '–';
-  return Object.entries(value as Record<string, unknown>)
+  const entries = Object.entries(value as Record<string, unknown>);
+  // A set of flags, such as roles, reads as those that are up.
+  if (entries.length > 0 && entries.every(([, one]) => typeof one === 'boolean')) {
+    const up = entries.filter(([, one]) => one).map(([flag]) => sayKey(flag).toLowerCase());
+    return up.join(', ') || 'none';
+  }
+  return entries
     .map(([inner, one]) => `${sayKey(inner)}: ${sayValue(inner, one, format)}`)
     .join(', ');
 }
@@ -67,7 +88,7 @@ export type AuditChange = { key: string; label: string; before: string; after: s
 
 type Content = Record<string, unknown> | null;
 
-/** What an entry changed, key by key; ids that only the program reads are left out. */
+/** What an entry changed, key by key; what stayed, and ids that only the program reads, are left out. */
 export function listChanges(before: Content, after: Content, format: Format): AuditChange[] {
   const keys = new Set([...Object.keys(before ?? {}), ...Object.keys(after ?? {})]);
   return [...keys]
@@ -75,7 +96,9 @@ export function listChanges(before: Content, after: Content, format: Format): Au
     .map((key) => ({
       key,
       label: sayKey(key),
-      before: before && key in before ? sayValue(key, before[key], format) : '',
+      before:
+        before && key in before && !isEmpty(before[key]) ? sayValue(key, before[key], format) : '',
       after: after && key in after ? sayValue(key, after[key], format) : '',
-    }));
+    }))
+    .filter((change) => change.before !== change.after);
 }
