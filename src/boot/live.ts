@@ -5,7 +5,7 @@ import { useBuysStore } from 'src/stores/buys.ts';
 import { useSessionStore } from 'src/stores/session.ts';
 import { useSplitsStore } from 'src/stores/splits.ts';
 
-export default defineBoot(() => {
+export default defineBoot(({ router }) => {
   const session = useSessionStore();
   const buys = useBuysStore();
   const splits = useSplitsStore();
@@ -14,10 +14,16 @@ export default defineBoot(() => {
   onLive('buy:changed', (change) => splits.hear(change));
   onLive('split:changed', (change) => splits.receive(change));
 
+  /** A role or a membership may be another one since the connection was lost. */
+  async function lookAgain() {
+    await session.load();
+    const { club } = router.currentRoute.value.params;
+    if (typeof club === 'string' && !session.findMembership(club)) await router.replace('/');
+  }
+
   let lost = false;
   onConnection((connected) => {
-    // A role or a membership may be another one since the connection was lost.
-    if (connected && lost) session.load().catch(() => undefined);
+    if (connected && lost) lookAgain().catch(() => undefined);
     lost = !connected;
   });
 

@@ -64,7 +64,10 @@ describe('signing in', () => {
     replies['GET /session'] = { body: session('noor@quillmere.example') };
     const router = await show(SignInPage, '/sign-in?next=/c/quillmere/members');
     await fireEvent.update(screen.getByLabelText('E-mail address'), 'noor@quillmere.example');
-    await fireEvent.update(screen.getByLabelText('Password', { selector: 'input' }), 'rain on the roof');
+    await fireEvent.update(
+      screen.getByLabelText('Password', { selector: 'input' }),
+      'rain on the roof',
+    );
     await submit('Sign in');
     await waitFor(() => expect(router.currentRoute.value.fullPath).toBe('/c/quillmere/members'));
     expect(calls[0]).toEqual([
