@@ -305,6 +305,8 @@ export const BillsReply = z.strictObject({
       billed: z.boolean(),
     }),
   ),
+  /** Tax that the offers' prices contain, by the terms. */
+  taxRates: z.array(z.strictObject({ offerId: Id, taxRatePpm: z.int() })),
   /** What the bills do to each share so far. */
   shares: z.array(ShareChange),
   may: z.strictObject({ enter: z.boolean(), confirm: z.boolean() }),

@@ -92,6 +92,7 @@ export async function readBills(actor: BuyActor): Promise<BillsReply> {
         billed: billed.has(id),
       }),
     ),
+    taxRates: book.terms.offers.map(({ id, taxRatePpm }) => ({ offerId: id, taxRatePpm })),
     shares: shareChanges(book, locked, expectedShares(book, known), buy.priceLimitPermille),
     may: { enter: canEnterBills(actor), confirm: canCloseBuy(actor) },
   };

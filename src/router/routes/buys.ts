@@ -17,6 +17,24 @@ export const buysRoutes: RouteRecordRaw[] = [
     // One page a step, shown inside the buy's own frame; the frame sends `buy` to the step at hand.
     children: [
       {
+        path: 'locked',
+        name: 'buy-locked',
+        component: () => import('src/pages/buys/BuyLockedPage.vue'),
+        props: true,
+      },
+      {
+        path: 'orders',
+        name: 'buy-orders',
+        component: () => import('src/pages/buys/BuyOrdersPage.vue'),
+        props: true,
+      },
+      {
+        path: 'settled',
+        name: 'buy-settled',
+        component: () => import('src/pages/buys/BuySettledPage.vue'),
+        props: true,
+      },
+      {
         path: 'sheet',
         name: 'buy-sheet',
         component: () => import('src/pages/buys/BuySheetPage.vue'),
@@ -47,5 +65,12 @@ export const buysRoutes: RouteRecordRaw[] = [
         props: true,
       },
     ],
+  },
+  {
+    path: '/c/:club/buys/:buy/orders/:supplier/sheet',
+    name: 'buy-order-sheet',
+    component: () => import('src/pages/buys/OrderSheetPage.vue'),
+    props: true,
+    meta: { needs: 'session', layout: 'print', title: 'Order sheet', nav: 'buys' },
   },
 ];
