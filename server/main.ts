@@ -15,7 +15,12 @@ async function start(): Promise<void> {
   const applied = await migrate(sequelize);
   if (applied.length > 0) logger.info({ applied }, 'schema brought forward');
   await openMail();
-  const http = createServer(createApp());
+  const app = createApp();
+  let open = false;
+  const http = createServer((req, res) => {
+    if (open) app(req, res);
+    else res.writeHead(503, { 'Retry-After': '5' }).end('Tarewell is starting.');
+  });
   const io = attachSockets(http);
   await new Promise<void>((resolve, reject) => {
     http.once('error', reject);
@@ -26,6 +31,7 @@ async function start(): Promise<void> {
     const { loadDemo } = await import('#seeds/index.ts');
     await loadDemo();
   }
+  open = true;
   const stopJobs = await startJobs();
   process.stdout.write(`Tarewell is ready at ${publicUrl()}\n`);
 
