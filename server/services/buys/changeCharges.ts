@@ -22,6 +22,13 @@ function sayCharge({ name, amountMinor, basis }: Fields, say: Say): string {
   return `${name} ${say.money(amountMinor)}, shared ${bases[basis]}`;
 }
 
+function sayChange(before: Fields, after: Fields, say: Say): string {
+  const same = before.basis === after.basis && before.name === after.name;
+  return same && before.amountMinor !== after.amountMinor
+    ? `${after.name} ${say.money(after.amountMinor)}, before ${say.money(before.amountMinor)}.`
+    : `Now ${sayCharge(after, say)}. Before: ${sayCharge(before, say)}.`;
+}
+
 async function check(buy: Buy, charge: Fields, tx: Tx): Promise<void> {
   const errors: Record<string, string> = {};
   if (charge.kind === 'rebate' ? charge.amountMinor > 0 : charge.amountMinor < 0)
@@ -113,7 +120,7 @@ export async function changeCharge(
       tx,
     );
     return {
-      summary: `Now: ${sayCharge(after, say)}; before: ${sayCharge(before, say)}.`,
+      summary: sayChange(before, after, say),
       action: 'buys.changeCharge',
       subject: { type: 'charge', id: chargeId },
       before,

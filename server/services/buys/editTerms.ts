@@ -46,6 +46,14 @@ export function buyPath(actor: { club: { slug: string } }, buyId: string): strin
   return `/c/${actor.club.slug}/buys/${buyId}`;
 }
 
+/** What all shares come to, where a change moved it. */
+function saySums(before: OpenSums | null, after: OpenSums | null, say: Say): string {
+  if (!before || before.totalMinor === after?.totalMinor) return '';
+  return after
+    ? `All shares together: ${say.money(after.totalMinor)}, before ${say.money(before.totalMinor)}.`
+    : 'No packs would cover the pledges any more.';
+}
+
 async function tellPledgers(
   actor: BuyActor,
   buy: Buy,
@@ -104,8 +112,11 @@ export async function editTerms(
         const before = counts ? await openSums(buy, tx) : null;
         const edit = await work(buy, tx, sayFor(actor.club));
         if (!edit) return;
-        await changeTerms(buy, edit.summary, by, tx);
         const after = counts ? await openSums(buy, tx) : null;
+        const summary = [edit.summary, saySums(before, after, sayFor(actor.club))]
+          .filter(Boolean)
+          .join(' ');
+        await changeTerms(buy, summary, by, tx);
         const pledged = buy.state === 'draft' ? [] : await pledgersOf(buy.id, tx);
         const to = [...new Set([...pledged, ...(edit.alsoTell ?? [])])].filter(
           (id) => id !== actor.membershipId,

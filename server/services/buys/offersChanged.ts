@@ -4,6 +4,7 @@ import { publishToBuy } from '../../sockets/publish.ts';
 import type { By } from '../actorName.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
+import { requestPlan } from '../sheet/planning.ts';
 import { changeTerms, pledgersOf } from './withBuy.ts';
 
 /** One change of an offer, or with `offerId` null of a supplier's terms, in a plain sentence with its effect. */
@@ -102,5 +103,8 @@ async function tellBuy(
     },
   });
   const { sheetVersion } = buy;
-  tx.afterCommit(() => publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion }));
+  tx.afterCommit(() => {
+    publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion });
+    requestPlan(buyId);
+  });
 }
