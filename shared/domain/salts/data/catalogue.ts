@@ -60,13 +60,13 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'low',
       criticalHumidity: 90.5,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: ['H272'],
       signalWord: 'Warning',
       source:
-        'published: chemicalbook.in SDS page (H272 Ox. Sol. 3); other stored SDS add H319 or H302/H319',
+        'published: chemicalbook.in SDS page (H272 Ox. Sol. 3); other SDS add H319 or H302/H319',
     },
     transport: {
       value: 'UN1486, class 5.1, packing group III',
@@ -81,8 +81,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       {
         list: 'reportable',
         value: 'GB Poisons Act 1972 Sch. 1A Part 3 (reportable)',
-        source:
-          'published: stored Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
+        source: 'published: Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
       },
     ],
     storage: {
@@ -98,7 +97,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       },
       {
         value:
-          'Only main aquarium salt whose solubility falls steeply in the cold (about 21 g/100 g at 10 C against 32 at 20 C).',
+          'Only main aquarium salt whose solubility falls steeply in the cold (about 21 g/100 g at 10 °C against 32 at 20 °C).',
         source: 'memory',
       },
     ],
@@ -231,7 +230,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [132.56, 144.5, 159.74, 168.1, 178.55, 209.6],
       anhydrousPer100gTotalWater: [132.56, 144.5, 159.74, 168.1, 178.55, 209.6],
       anhydrousMassPercent: [57.0, 59.1, 61.5, 62.7, 64.1, 67.7],
-      note: 'stable solid near room temperature is a hydrate (trihydrate); CRC flags a phase change between 30 and 40 C',
+      note: 'stable solid near room temperature is a hydrate (trihydrate); CRC flags a phase change between 30 and 40 °C',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -332,7 +331,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'very low',
       criticalHumidity: 96.3,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -416,7 +415,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'moderate',
       criticalHumidity: 84.0,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -708,7 +707,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'MgSO4',
     cas: {
       value: '7487-88-9',
-      source: 'published: stored SDS (manualshelf.com 100060267)',
+      source: 'published: SDS (manualshelf.com 100060267)',
     },
     molarMass: {
       value: 120.361,
@@ -963,7 +962,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'Ca(NO3)2·4H2O',
     cas: {
       value: '13477-34-4',
-      source: 'published: stored SDS docslib 3693624',
+      source: 'published: SDS docslib 3693624',
     },
     molarMass: {
       value: 236.146,
@@ -1005,14 +1004,14 @@ export const catalogue: readonly CatalogueSalt[] = [
       source: 'memory',
     },
     appearance: {
-      value: 'colourless crystals, often wet-looking; melts in its own water near 43 C (memory)',
+      value: 'colourless crystals, often wet-looking; melts in its own water near 43 °C (memory)',
       source: 'memory',
     },
     hygroscopicity: {
       value: 'very high (deliquescent)',
       criticalHumidity: 46.7,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: ['H302', 'H318'],
@@ -1032,8 +1031,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       {
         list: 'reportable',
         value: 'GB Poisons Act 1972 Sch. 1A Part 3 (reportable)',
-        source:
-          'published: stored Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
+        source: 'published: Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
       },
     ],
     storage: {
@@ -1114,7 +1112,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     ghs: {
       statements: ['H302', 'H318'],
       signalWord: 'Danger',
-      source: 'published: stored supplier SDS (scribd 461720132)',
+      source: 'published: supplier SDS (scribd 461720132)',
     },
     transport: {
       value:
@@ -1130,8 +1128,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       {
         list: 'reportable',
         value: 'GB Poisons Act 1972 Sch. 1A Part 3 (reportable)',
-        source:
-          'published: stored Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
+        source: 'published: Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
       },
     ],
     storage: {
@@ -1274,7 +1271,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [57.98, 64.45, 72.8, 81.26, 96.54, 112.09],
       anhydrousPer100gTotalWater: [57.98, 64.45, 72.8, 81.26, 96.54, 112.09],
       anhydrousMassPercent: [36.7, 39.19, 42.13, 44.83, 49.12, 52.85],
-      note: 'solid phase changes (6H2O, 4H2O, 2H2O) across 25-60 C',
+      note: 'solid phase changes (6H2O, 4H2O, 2H2O) across 25-60 °C',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -1358,7 +1355,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [94.61, 107.96, 126.28, 146.21, 186.26, 233.42],
       anhydrousPer100gTotalWater: [57.98, 64.45, 72.8, 81.26, 96.54, 112.09],
       anhydrousMassPercent: [36.7, 39.19, 42.13, 44.83, 49.12, 52.85],
-      note: 'solid phase changes (6H2O, 4H2O, 2H2O) across 25-60 C',
+      note: 'solid phase changes (6H2O, 4H2O, 2H2O) across 25-60 °C',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -1596,7 +1593,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [6.88, 12.11, 21.8, 30.72, 40.25, 48.81],
       anhydrousPer100gTotalWater: [6.88, 12.11, 21.8, 30.72, 40.25, 48.81],
       anhydrousMassPercent: [6.44, 10.8, 17.9, 23.5, 28.7, 32.8],
-      note: 'decahydrate below 32 C, then 7H2O/1H2O: retrograde above about 40 C',
+      note: 'decahydrate below 32 °C, then 7H2O/1H2O: retrograde above about 40 °C',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -1765,7 +1762,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'moderate',
       criticalHumidity: 72.4,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: ['H272', 'H319'],
@@ -1785,8 +1782,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       {
         list: 'reportable',
         value: 'GB Poisons Act 1972 Sch. 1A Part 3 (reportable)',
-        source:
-          'published: stored Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
+        source: 'published: Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
       },
     ],
     storage: {
@@ -1858,7 +1854,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'moderate',
       criticalHumidity: 79.2,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -1945,7 +1941,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'very high',
       criticalHumidity: 59.4,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: ['H272', 'H319'],
@@ -1966,8 +1962,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       {
         list: 'restricted',
         value: 'GB Poisons Act 1972 Sch. 1A Part 1 (regulated since 1 Oct 2023 at 16 % N or more)',
-        source:
-          'published: stored Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
+        source: 'published: Wikipedia page on SI 2023/63 and legislation.gov.uk SI 2023/63 reg. 8',
       },
     ],
     storage: {
@@ -2041,7 +2036,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'moderate',
       criticalHumidity: 77.2,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: ['H302', 'H319'],
@@ -2124,7 +2119,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'low',
       criticalHumidity: 91.6,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -2207,7 +2202,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'moderate',
       criticalHumidity: 82.5,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -2286,7 +2281,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       value: 'high',
       criticalHumidity: 72.5,
       source:
-        'published: critical relative humidity at 30 C, Wikipedia "Critical relative humidity" (stored copy iiab.me 2023-10)',
+        'published: critical relative humidity at 30 °C, Wikipedia "Critical relative humidity" (as of 2023-10)',
     },
     ghs: {
       statements: [],
@@ -2325,7 +2320,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'FeSO4·7H2O',
     cas: {
       value: '7782-63-0',
-      source: 'published: stored SDS paperzz 8464516',
+      source: 'published: SDS paperzz 8464516',
     },
     molarMass: {
       value: 278.006,
@@ -2375,7 +2370,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     ghs: {
       statements: ['H302', 'H315', 'H319'],
       signalWord: 'Warning',
-      source: 'published: stored SDS paperzz 8464516 (H302, H315); H319 from memory',
+      source: 'published: SDS paperzz 8464516 (H302, H315); H319 from memory',
     },
     transport: {
       value:
@@ -2401,7 +2396,7 @@ export const catalogue: readonly CatalogueSalt[] = [
   {
     id: 'FeEDTA',
     name: 'Iron EDTA',
-    commonNames: ['iron EDTA, sodium ferric EDTA trihydrate', 'Fe-EDTA 13 %'],
+    commonNames: ['iron EDTA', 'sodium ferric EDTA trihydrate', 'Fe-EDTA 13 %'],
     iupacName: {
       value: 'sodium [ethylenediaminetetraacetato(4-)]ferrate(III) trihydrate',
       source: 'memory',
@@ -2497,7 +2492,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'C14H19FeN3NaO10',
     cas: {
       value: '12389-75-2',
-      source: 'published: stored supplier documentation hub (benchchem B1401466)',
+      source: 'published: supplier documentation hub (benchchem B1401466)',
     },
     molarMass: {
       value: 468.152,
@@ -2789,7 +2784,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [63.21, 71.67, 76.07, 77.12, 77.12, 73.0],
       anhydrousPer100gTotalWater: [52.91, 59.49, 62.87, 63.67, 63.67, 60.51],
       anhydrousMassPercent: [34.6, 37.3, 38.6, 38.9, 38.9, 37.7],
-      note: 'stable hydrate changes (5H2O/4H2O/1H2O); solubility peaks near 25-30 C and then falls',
+      note: 'stable hydrate changes (5H2O/4H2O/1H2O); solubility peaks near 25-30 °C and then falls',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -2992,7 +2987,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'ZnSO4·H2O',
     cas: {
       value: '7446-19-7',
-      source: 'published: stored SDS docslib 2272473',
+      source: 'published: SDS docslib 2272473',
     },
     molarMass: {
       value: 179.451,
@@ -3070,7 +3065,7 @@ export const catalogue: readonly CatalogueSalt[] = [
     formula: 'CuSO4·5H2O',
     cas: {
       value: '7758-99-8',
-      source: 'published: stored SDS (manualshelf.com 100060267)',
+      source: 'published: SDS (manualshelf.com 100060267)',
     },
     molarMass: {
       value: 249.677,
@@ -3339,7 +3334,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [56.14, 83.79, 86.2, 86.2, 87.84, 89.94],
       anhydrousPer100gTotalWater: [44.09, 63.4, 65.02, 65.02, 66.11, 67.5],
       anhydrousMassPercent: [30.6, 38.8, 39.4, 39.4, 39.8, 40.3],
-      note: 'decahydrate below about 10 C',
+      note: 'decahydrate below about 10 °C',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },
@@ -3660,7 +3655,7 @@ export const catalogue: readonly CatalogueSalt[] = [
       asSoldPer100gAddedWater: [57.1, 70.77, 87.05, 95.76, 106.03, 119.07],
       anhydrousPer100gTotalWater: [27.23, 32.28, 37.74, 40.45, 43.47, 47.06],
       anhydrousMassPercent: [21.4, 24.4, 27.4, 28.8, 30.3, 32.0],
-      note: 'heptahydrate below about 31 C (CRC flags the change between 25 and 40 C)',
+      note: 'heptahydrate below about 31 °C (CRC flags the change between 25 and 40 °C)',
       source:
         'published: CRC Handbook of Chemistry and Physics 98th ed. (Rumble 2017), "Aqueous Solubility of Inorganic Compounds at Various Temperatures", via github chicolucio/solutions @2e6d2b9 data/aqueous_solubility_inorganic_temperatures.csv; converted from mass % by calculation',
     },

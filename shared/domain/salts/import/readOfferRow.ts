@@ -95,9 +95,7 @@ function readIncludesTax(text: string): Outcome<boolean> {
 
 function readWhole(text: string, least: number, most: number): Outcome<number> {
   const value = /^\d{1,9}$/.test(text) ? Number(text) : NaN;
-  return value >= least && value <= most
-    ? ok(value)
-    : no(`Write whole packs, from ${least} to ${most}.`);
+  return value >= least && value <= most ? ok(value) : no(`Write whole packs, ${least} or more.`);
 }
 
 function readLink(text: string): Outcome<string> {

@@ -80,7 +80,8 @@ describe('the rows of an import', () => {
 
   it('narrows to the mistakes', async () => {
     render(ImportRows, { props: { preview } });
-    await fireEvent.click(screen.getByRole('button', { name: 'Mistake 2' }));
+    await fireEvent.click(screen.getByRole('combobox', { name: 'Show' }));
+    await fireEvent.click(await screen.findByText('Mistake 2'));
     expect(screen.queryByRole('rowheader', { name: '2' })).toBeNull();
     expect(screen.getByRole('rowheader', { name: '3' })).toBeTruthy();
   });
