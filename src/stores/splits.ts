@@ -16,6 +16,8 @@ import type { BuyAt } from 'src/api/splits.ts';
 import { useBuysStore } from 'src/stores/buys.ts';
 
 const PAUSE_MS = 200;
+/** The head says how many portions are left; it may lag behind the bench a little. */
+const HEAD_PAUSE_MS = 1_000;
 
 function merged<Row extends { id: string; version: number }>(
   rows: readonly Row[],
@@ -41,6 +43,7 @@ export const useSplitsStore = defineStore('splits', () => {
   const shares = ref<Record<string, MyShare>>({});
   const clubs = new Map<string, string>();
   const timers = new Map<string, ReturnType<typeof setTimeout>>();
+  const heads = new Map<string, ReturnType<typeof setTimeout>>();
   const buys = useBuysStore();
 
   const sheetOf = (buy: string): SplitSheet | null => sheets.value[buy] ?? null;
@@ -66,6 +69,18 @@ export const useSplitsStore = defineStore('splits', () => {
     );
   }
 
+  function headSoon(buy: string) {
+    const club = clubs.get(buy);
+    if (club === undefined || heads.has(buy)) return;
+    heads.set(
+      buy,
+      setTimeout(() => {
+        heads.delete(buy);
+        buys.reloadSoon(club, buy);
+      }, HEAD_PAUSE_MS),
+    );
+  }
+
   /** Takes one change, from the reply to an act or from the socket; after a gap the whole is asked for. */
   function receive(change: SplitChange) {
     const sheet = sheets.value[change.buyId];
@@ -78,6 +93,7 @@ export const useSplitsStore = defineStore('splits', () => {
       portions: merged(sheet.portions, change.portions).sort(byCode),
     };
     if (gap || change.partly) reloadSoon(change.buyId);
+    if (change.portions.some(({ state }) => state !== 'claimed')) headSoon(change.buyId);
   }
 
   /** A buy moved on or its terms changed: what is shown of it is asked for again. */

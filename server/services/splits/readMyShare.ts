@@ -28,14 +28,20 @@ async function findTargetSheets(buyId: string): Promise<ShareSheet[]> {
   return rows.map(({ sheet }) => sheet);
 }
 
-async function chargeNames(buyId: string, known: Record<string, string>) {
+async function chargeNames(
+  buyId: string,
+  known: Readonly<Record<string, string>>,
+  suppliers: readonly { id: string; name: string }[],
+) {
   const rows = await select<{ id: string; name: string }>(
     'select id, name from charges where buy_id = :buyId',
     { buyId },
   );
   const names = new Map(rows.map(({ id, name }) => [id, name]));
-  return (id: string) =>
-    known[id] ?? names.get(id) ?? (supplierOfShipping(id) === null ? 'Charge' : 'Shipping');
+  return (id: string) => {
+    const supplier = suppliers.find((each) => each.id === supplierOfShipping(id));
+    return supplier ? `Shipping, ${supplier.name}` : (known[id] ?? names.get(id) ?? 'Charge');
+  };
 }
 
 /** The reader's own share of a buy through its stages, each figure with its arithmetic. */
@@ -61,7 +67,7 @@ export async function readMyShare(actor: BuyActor): Promise<MyShare> {
   const estimate = memberIn(told?.sheet, me);
   const finals = memberIn(final?.sheet, me);
   const paying = finals ?? estimate;
-  const nameOf = await chargeNames(buyId, final?.extra.names ?? {});
+  const nameOf = await chargeNames(buyId, final?.extra.names ?? {}, terms.suppliers);
   const sumOf = (rows: readonly (number | null)[]) =>
     rows.reduce((total: number, mg) => total + (mg ?? 0), 0);
 
