@@ -42,7 +42,8 @@ async function take(browser: Browser, size: (typeof widths)[number], mode: 'ligh
       if (message.type() === 'error') console.log(`  ${size.width} ${mode}: ${message.text()}`);
     });
     await page.goto(path);
-    await page.waitForLoadState('load');
+    await page.waitForSelector('main h1');
+    await page.waitForLoadState('networkidle');
     await page.waitForFunction(() => !document.querySelector('[aria-busy="true"]'));
     await page.evaluate(() => document.fonts.ready);
     await page.waitForTimeout(300);
