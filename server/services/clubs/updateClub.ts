@@ -27,9 +27,12 @@ async function change(actor: ClubActor, version: number, changes: Changes): Prom
       rejectOnEmpty: true,
     });
     if (club.version !== version) {
-      throw stale('Someone changed the settings since you opened the page.', {
-        version: club.version,
-      });
+      throw stale(
+        'Someone changed the settings since you opened the page. Nothing of yours was saved.',
+        {
+          version: club.version,
+        },
+      );
     }
     club.set(changes);
     const keys = (Object.keys(changes) as (keyof Changes)[]).filter((key) => club.changed(key));

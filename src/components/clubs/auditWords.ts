@@ -1,4 +1,6 @@
-import type { Format } from 'src/composables/useFormat.ts';
+import type { Format as FullFormat } from 'src/composables/useFormat.ts';
+
+type Format = Pick<FullFormat, 'money' | 'mass' | 'percent' | 'dateTime'>;
 
 const acts: Record<string, string> = {
   'clubs.found': 'founded the club',

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { execute, select, transact } from '#server/config/database.ts';
+import { Pledge } from '#server/models/Pledge.ts';
 import { browser, signedIn, testPassword } from '#tests/support/client.ts';
 import { lastMail, mailsTo } from '#tests/support/mails.ts';
-import { makeAccount, makeClub, makeMember } from '#tests/support/world.ts';
+import { makeAccount, makeClub, makeMember, makeWorld } from '#tests/support/world.ts';
 
 const goodPassword = 'rain on the greenhouse roof';
 
@@ -283,6 +284,40 @@ describe('deleting an account', () => {
     expect(body.code).toBe('last_of_role');
     expect(body.detail).toContain('last steward');
     await agent.get('/api/v1/account').expect(200);
+  });
+
+  it('is refused while the person owes for a locked buy; then a name that the buy needs stays', async () => {
+    const { club, people, buy, line } = await makeWorld('locked');
+    const { member } = people;
+    await Pledge.create({
+      buyId: buy.id,
+      lineId: line.id,
+      membershipId: member.membership.id,
+      wantedMg: 100_000,
+      at: new Date(),
+    });
+    const due = (minor: number) =>
+      transact((tx) =>
+        execute(
+          `insert into buy_members (buy_id, membership_id, locked_minor, due_minor) values (:buyId, :id, 1496, :minor)
+           on conflict (buy_id, membership_id) do update set due_minor = :minor`,
+          { buyId: buy.id, id: member.membership.id, minor },
+          tx,
+        ),
+      );
+    const agent = await member.agent();
+    await due(1496);
+    const { body } = await agent
+      .delete('/api/v1/account')
+      .send({ password: testPassword })
+      .expect(409);
+    expect(body.code).toBe('still_owed');
+    expect(body.detail).toContain(club.name);
+    await due(0);
+    await agent.delete('/api/v1/account').send({ password: testPassword }).expect(200);
+    await member.membership.reload();
+    expect(member.membership).toMatchObject({ status: 'left', displayName: 'Member Mo' });
+    expect(await Pledge.count({ where: { wantedMg: 100_000 } })).toBe(1);
   });
 
   it('leaves the clubs, ends the sessions, frees the address and forgets the name', async () => {

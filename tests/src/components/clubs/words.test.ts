@@ -12,14 +12,13 @@ import {
 } from 'src/components/clubs/clubChoices.ts';
 import { changesOf, toDraft } from 'src/components/clubs/clubDraft.ts';
 import { filterMembers, sayRoles } from 'src/components/clubs/memberRows.ts';
-import type { Format } from 'src/composables/useFormat.ts';
 
 const format = {
   money: (minor: number) => `€${minor / 100}`,
   mass: (mg: number) => `${mg / 1000} g`,
   percent: (permille: number) => `${permille / 10} %`,
   dateTime: () => 'Tue 1 Dec, 19:09',
-} as Format;
+};
 
 describe('an audit entry in words', () => {
   it('says what was done, spelling out what it has no words for', () => {
