@@ -26,6 +26,8 @@ export const BuySummary = z.strictObject({
   name: z.string(),
   state: BuyStateField,
   frozen: z.boolean(),
+  /** False for drafts, and for drafts that were discarded. */
+  opened: z.boolean(),
   responsible: BuyPerson,
   closesAt: Instant.nullable(),
   frozenUntil: Instant.nullable(),

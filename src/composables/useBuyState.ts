@@ -5,6 +5,7 @@ import { useCountdown } from 'src/composables/useCountdown.ts';
 export type BuyStateFacts = {
   state: BuyState;
   frozen: boolean;
+  opened: boolean;
   closesAt: string | null;
   frozenUntil: string | null;
   /** How far the server's clock is ahead of this device's, in ms. */
@@ -35,6 +36,7 @@ export function useBuyState(facts: MaybeRefOrGetter<BuyStateFacts | null>) {
   const label = computed(() => {
     const now = toValue(facts);
     if (!now) return '';
+    if (now.state === 'cancelled' && !now.opened) return 'Discarded';
     if (now.state !== 'open' || !until.value) return stateWords[now.state];
     if (now.frozen) return `Pledges rest · ${text.value} to decide`;
     return over.value ? 'Closing' : `Open · closes in ${text.value}`;

@@ -17,6 +17,7 @@ export function presentBuySummary(
     name: row.name,
     state: row.state,
     frozen: row.state === 'open' && row.frozen_at !== null,
+    opened: row.opened_at !== null,
     responsible: { membershipId: row.responsible_id, name: row.responsible_name },
     closesAt: instant(row.closes_at),
     frozenUntil: instant(row.frozen_until),
