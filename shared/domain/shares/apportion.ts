@@ -14,12 +14,14 @@ function fitsDouble(total: number, weights: readonly number[]): boolean {
 /** Gives one unit more to the largest remainders; equal ones to the earlier index. */
 function giveRest<T extends number | bigint>(parts: number[], remainders: T[], rest: number): void {
   if (rest === 0) return;
-  const order = remainders
-    .map((remainder, index) => ({ remainder, index }))
-    .sort((a, b) =>
-      a.remainder === b.remainder ? a.index - b.index : a.remainder < b.remainder ? 1 : -1,
-    );
-  for (const { index } of order.slice(0, rest)) parts[index] = (parts[index] ?? 0) + 1;
+  const order = Array.from(remainders.keys()).sort((a, b) => {
+    const [left, right] = [remainders[a] as T, remainders[b] as T];
+    return left === right ? a - b : left < right ? 1 : -1;
+  });
+  for (let i = 0; i < rest; i++) {
+    const index = order[i] as number;
+    parts[index] = (parts[index] as number) + 1;
+  }
 }
 
 function apportionExact(total: bigint, weights: readonly number[]): number[] {

@@ -4,7 +4,13 @@ import { compareIds, compareTurns, instantMs } from './pledgeOrder.ts';
 import type { ShareCharge, ShareLine, SharePledge, ShareRequest } from './shareTypes.ts';
 
 /** A pledge with its instant read. */
-export type Turn = SharePledge & { atMs: number };
+export type Turn = {
+  memberId: string;
+  lineId: string;
+  wantedMg: number;
+  upToMg: number | undefined;
+  atMs: number;
+};
 
 /** A request that was checked: lines and charges by id, each line's pledges in their order. */
 export type CheckedRequest = {
@@ -38,11 +44,12 @@ function checkLine(line: ShareLine): void {
   checkOneOf(line.shortage, ['scale', 'queue'], `${name}shortage`);
 }
 
-function checkSteps(mg: number, stepMg: number, field: string): void {
+/** Names are put together only for a message, since a large club has very many pledges. */
+function checkSteps(mg: number, stepMg: number, pledge: SharePledge, key: string): void {
+  if (Number.isSafeInteger(mg) && mg >= 0 && mg % stepMg === 0) return;
+  const field = `pledge of ${pledge.memberId} on ${pledge.lineId}: ${key}`;
   wholeAtLeast(mg, field);
-  if (mg % stepMg !== 0) {
-    throw new RangeError(`${field} must be a multiple of ${stepMg} mg, not ${mg}`);
-  }
+  throw new RangeError(`${field} must be a multiple of ${stepMg} mg, not ${mg}`);
 }
 
 function checkCharge(charge: ShareCharge, lineIds: ReadonlySet<string>): Set<string> {
@@ -87,21 +94,29 @@ function memberOrder(turns: readonly Turn[]): string[] {
 export function checkShareRequest(request: ShareRequest): CheckedRequest {
   currencyExponent(request.currency);
   const lines = sortedById(request.lines, 'lines');
-  const byLine = new Map(lines.map((line) => [line.id, { line, pledges: [] as Turn[] }]));
+  const byLine = new Map(
+    lines.map((line) => [line.id, { line, pledges: [] as Turn[], members: new Set<string>() }]),
+  );
   lines.forEach(checkLine);
 
   const turns: Turn[] = [];
-  const seen = new Map<string, Set<string>>();
   for (const pledge of request.pledges) {
-    const name = `pledge of ${pledge.memberId} on ${pledge.lineId}: `;
-    const entry = byLine.get(pledge.lineId);
-    if (!entry) throw new RangeError(`${name}lineId names no line`);
-    const members = seen.get(pledge.lineId) ?? new Set();
-    if (members.has(pledge.memberId)) throw new RangeError(`${name}there are two`);
-    seen.set(pledge.lineId, members.add(pledge.memberId));
-    checkSteps(pledge.wantedMg, entry.line.stepMg, `${name}wantedMg`);
-    checkSteps(pledge.upToMg ?? 0, entry.line.stepMg, `${name}upToMg`);
-    const turn = { ...pledge, atMs: instantMs(pledge.at, `${name}at`) };
+    const { memberId, lineId, wantedMg, upToMg } = pledge;
+    const entry = byLine.get(lineId);
+    if (!entry) throw new RangeError(`pledge of ${memberId}: lineId names no line: ${lineId}`);
+    if (entry.members.has(memberId)) {
+      throw new RangeError(`pledge of ${memberId} on ${lineId}: there are two`);
+    }
+    entry.members.add(memberId);
+    checkSteps(wantedMg, entry.line.stepMg, pledge, 'wantedMg');
+    if (upToMg !== undefined) checkSteps(upToMg, entry.line.stepMg, pledge, 'upToMg');
+    const turn: Turn = {
+      memberId,
+      lineId,
+      wantedMg,
+      upToMg,
+      atMs: instantMs(pledge.at, 'pledge.at'),
+    };
     entry.pledges.push(turn);
     turns.push(turn);
   }

@@ -3,8 +3,14 @@ import { apportion } from './apportion.ts';
 import type { Turn } from './checkShareRequest.ts';
 import type { ShareLine, ShareStep } from './shareTypes.ts';
 
-/** Milligrams for each pledge in the given order, what the shelf keeps, and how it came about. */
-export type DividedGrams = { mg: number[]; shelfMg: number; steps: ShareStep[][] };
+/**
+ * Milligrams for each pledge in the given order, what the shelf keeps, and how a pledge's came about.
+ */
+export type DividedGrams = {
+  mg: number[];
+  shelfMg: number;
+  explain(index: number): ShareStep[];
+};
 
 /** `apportion` in whole portion steps, capped at what the weights can take when `capped`. */
 function apportionSteps(freeMg: number, takeMg: number[], stepMg: number, capped: boolean) {
@@ -15,36 +21,48 @@ function apportionSteps(freeMg: number, takeMg: number[], stepMg: number, capped
   return apportion(total, takes).map((steps) => steps * stepMg);
 }
 
+/** One round of giving what is to spare. */
+type Round = { code: string; takeMg: number[]; extraMg: number[]; ofMg: number; freeMg: number };
+
 function divideEnough(line: ShareLine, pledges: Turn[], wantedMg: number): DividedGrams {
-  const { stepMg, availableMg, spreadMaxPermille } = line;
+  const { id: lineId, stepMg, availableMg, spreadMaxPermille } = line;
   const mg = pledges.map((pledge) => pledge.wantedMg);
-  const steps: ShareStep[][] = pledges.map((pledge) => [
-    { code: 'wanted', values: { lineId: line.id, mg: pledge.wantedMg } },
-  ]);
+  const rounds: Round[] = [];
   let freeMg = Math.max(0, availableMg - wantedMg - (line.reserveMg ?? 0));
   freeMg -= freeMg % stepMg;
 
   const give = (code: string, takeMg: number[], capped: boolean) => {
-    const extra = apportionSteps(freeMg, takeMg, stepMg, capped);
-    const ofMg = roughSum(takeMg);
-    extra.forEach((extraMg, index) => {
-      const take = takeMg[index] ?? 0;
-      if (take === 0 || freeMg === 0) return;
-      mg[index] = (mg[index] ?? 0) + extraMg;
-      const values = { lineId: line.id, mg: extraMg, takeMg: take, ofMg, freeMg };
-      steps[index]?.push({ code, values });
+    if (freeMg === 0) return;
+    const extraMg = apportionSteps(freeMg, takeMg, stepMg, capped);
+    rounds.push({ code, takeMg, extraMg, ofMg: roughSum(takeMg), freeMg });
+    extraMg.forEach((extra, index) => {
+      mg[index] = (mg[index] ?? 0) + extra;
+      freeMg -= extra;
     });
-    freeMg -= exactSum(extra, 'extra');
   };
 
-  const rooms = pledges.map((p) => Math.max(0, (p.upToMg ?? 0) - p.wantedMg));
-  give('upTo', rooms, true);
+  give(
+    'upTo',
+    pledges.map((pledge) => Math.max(0, (pledge.upToMg ?? 0) - pledge.wantedMg)),
+    true,
+  );
   if (line.surplus === 'spread') {
     const wanted = pledges.map((pledge) => pledge.wantedMg);
     if (spreadMaxPermille === undefined) give('spread', wanted, false);
     else give('spreadCapped', capsMg(wanted, spreadMaxPermille, stepMg), true);
   }
-  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), steps };
+  const explain = (index: number): ShareStep[] => {
+    const values = { lineId, mg: pledges[index]?.wantedMg ?? 0 };
+    const steps: ShareStep[] = [{ code: 'wanted', values }];
+    for (const { code, takeMg, extraMg, ofMg, freeMg: free } of rounds) {
+      const take = takeMg[index] ?? 0;
+      if (take === 0) continue;
+      const given = { lineId, mg: extraMg[index] ?? 0, takeMg: take, ofMg, freeMg: free };
+      steps.push({ code, values: given });
+    }
+    return steps;
+  };
+  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), explain };
 }
 
 function capsMg(wantedMg: number[], permille: number, stepMg: number): number[] {
@@ -55,27 +73,32 @@ function capsMg(wantedMg: number[], permille: number, stepMg: number): number[] 
 }
 
 function divideScaled(line: ShareLine, pledges: Turn[], wantedAllMg: number): DividedGrams {
-  const { stepMg, availableMg } = line;
+  const { id: lineId, stepMg, availableMg } = line;
   const wanted = pledges.map((pledge) => pledge.wantedMg);
   const mg = apportionSteps(availableMg, wanted, stepMg, true);
-  const steps = pledges.map(({ wantedMg }, index): ShareStep[] => {
-    const values = { lineId: line.id, mg: mg[index] ?? 0, wantedMg, wantedAllMg, availableMg };
-    return [{ code: 'scaled', values }];
-  });
-  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), steps };
+  const explain = (index: number): ShareStep[] => {
+    const [got, wantedMg] = [mg[index] ?? 0, wanted[index] ?? 0];
+    return [{ code: 'scaled', values: { lineId, mg: got, wantedMg, wantedAllMg, availableMg } }];
+  };
+  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), explain };
 }
 
 function divideQueued(line: ShareLine, pledges: Turn[]): DividedGrams {
-  const { stepMg, availableMg } = line;
+  const { id: lineId, stepMg, availableMg } = line;
   let leftMg = availableMg - (availableMg % stepMg);
-  const steps: ShareStep[][] = [];
+  const before: number[] = [];
   const mg = pledges.map(({ wantedMg }) => {
+    before.push(leftMg);
     const got = Math.min(wantedMg, leftMg);
-    steps.push([{ code: 'queued', values: { lineId: line.id, mg: got, wantedMg, leftMg } }]);
     leftMg -= got;
     return got;
   });
-  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), steps };
+  const explain = (index: number): ShareStep[] => {
+    const wantedMg = pledges[index]?.wantedMg ?? 0;
+    const values = { lineId, mg: mg[index] ?? 0, wantedMg, leftMg: before[index] ?? 0 };
+    return [{ code: 'queued', values }];
+  };
+  return { mg, shelfMg: availableMg - exactSum(mg, 'mg'), explain };
 }
 
 /**

@@ -1,105 +1,105 @@
 import { exactSum } from '../money/minor.ts';
-import { chargeWeights, type LineResult } from './chargeWeights.ts';
+import { chargeWeights, type PlacedLine } from './chargeWeights.ts';
 import { checkShareRequest, type CheckedRequest } from './checkShareRequest.ts';
 import { divideGrams } from './divideGrams.ts';
-import { divideMoney, taxPartsPerMillion } from './divideMoney.ts';
+import { divideMoney } from './divideMoney.ts';
 import { explainStep } from './explainStep.ts';
+import { chargeSteps, lineSteps, type ChargeResult } from './shareResults.ts';
 import type {
-  ChargeBasis,
   ChargeShare,
   LineShare,
+  MemberShare,
   ShareRequest,
   ShareSheet,
   ShareStep,
+  ShelfShare,
 } from './shareTypes.ts';
 
-type Account = { lines: LineShare[]; charges: ChargeShare[]; steps: ShareStep[] };
-type Entry = CheckedRequest['lines'][number];
-
-const chargeCodes: Record<ChargeBasis, string> = {
-  mass: 'chargeByMass',
-  value: 'chargeByValue',
-  member: 'chargeByMember',
-  portion: 'chargeByPortion',
-};
-
-const newAccount = (): Account => ({ lines: [], charges: [], steps: [] });
+/** Where a member's pledge stands on a line. */
+type Stand = { result: PlacedLine; index: number };
 
 function divideLine(
-  { line, pledges }: Entry,
+  { line, pledges }: CheckedRequest['lines'][number],
   places: ReadonlyMap<string, number>,
-  accounts: Account[],
-  shelf: Account,
-): LineResult {
-  const { id: lineId, costMinor: ofMinor, taxRate = 0 } = line;
+): PlacedLine {
   const grams = divideGrams(line, pledges);
   const shelfWeight = line.shelfPays === false ? 0 : grams.shelfMg;
-  const money = divideMoney(ofMinor, [...grams.mg, shelfWeight], taxRate);
-  const share = (index: number, mg: number): LineShare => ({
-    lineId,
-    mg,
-    costMinor: money.parts[index] ?? 0,
-    taxMinor: money.taxParts[index] ?? 0,
-  });
-  const ratePpm = taxPartsPerMillion(taxRate);
-
-  const parts = pledges.map(({ memberId }, index) => {
-    const place = places.get(memberId) ?? 0;
-    const mg = grams.mg[index] ?? 0;
-    const own = share(index, mg);
-    const { costMinor: minor, taxMinor } = own;
-    const account = accounts[place];
-    account?.lines.push(own);
-    account?.steps.push(...(grams.steps[index] ?? []));
-    if (mg > 0) {
-      const values = { lineId, mg, ofMg: money.weightSum, ofMinor, minor };
-      account?.steps.push({ code: 'lineCost', values });
-    }
-    if (taxMinor !== 0) {
-      const values = { lineId, ratePpm, minor, taxMinor, ofTaxMinor: money.tax };
-      account?.steps.push({ code: 'lineTax', values });
-    }
-    return { place, mg, costMinor: minor };
-  });
-  const shelfShare = share(pledges.length, grams.shelfMg);
-  shelf.lines.push(shelfShare);
-  return { line, parts, shelf: { mg: grams.shelfMg, costMinor: shelfShare.costMinor } };
+  const money = divideMoney(line.costMinor, [...grams.mg, shelfWeight], line.taxRate);
+  return { line, grams, money, places: pledges.map((p) => places.get(p.memberId) ?? 0) };
 }
 
 function divideCharge(
   { charge, lineIds }: CheckedRequest['charges'][number],
-  results: LineResult[],
-  accounts: Account[],
-  shelf: Account,
-): void {
-  const { id, basis, amountMinor: ofMinor, taxRate = 0 } = charge;
-  const own = results.filter(({ line }) => lineIds.has(line.id));
-  const weights = chargeWeights(basis, own, accounts.length);
-  const money = divideMoney(ofMinor, weights, taxRate);
-  const ratePpm = taxPartsPerMillion(taxRate);
-
-  [...accounts, shelf].forEach((account, place) => {
-    const minor = money.parts[place] ?? 0;
-    const taxMinor = money.taxParts[place] ?? 0;
-    const weight = weights[place] ?? 0;
-    account.charges.push({ id, minor, taxMinor });
-    if (weight > 0) {
-      const of = money.weightSum;
-      const measure: ShareStep['values'] =
-        basis === 'mass' ? { mg: weight, ofMg: of } : { weight, ofWeight: of };
-      const values = { chargeId: id, ...measure, ofMinor, minor };
-      account.steps.push({ code: chargeCodes[basis], values });
-    }
-    if (taxMinor !== 0) {
-      const values = { chargeId: id, ratePpm, minor, taxMinor, ofTaxMinor: money.tax };
-      account.steps.push({ code: 'chargeTax', values });
-    }
-  });
+  lines: PlacedLine[],
+  members: number,
+): ChargeResult {
+  const own = lines.filter(({ line }) => lineIds.has(line.id));
+  const weights = chargeWeights(charge.basis, own, members);
+  return { charge, weights, money: divideMoney(charge.amountMinor, weights, charge.taxRate) };
 }
 
-function totalOf({ lines, charges }: Account): number {
-  const sums = [...lines.map((line) => line.costMinor), ...charges.map((charge) => charge.minor)];
-  return exactSum(sums, 'totalMinor');
+function lineShare({ line, grams, money }: PlacedLine, index: number): LineShare {
+  return {
+    lineId: line.id,
+    mg: index < grams.mg.length ? (grams.mg[index] ?? 0) : grams.shelfMg,
+    costMinor: money.parts[index] ?? 0,
+    taxMinor: money.taxParts[index] ?? 0,
+  };
+}
+
+function chargeShare({ charge, money }: ChargeResult, place: number): ChargeShare {
+  return {
+    id: charge.id,
+    minor: money.parts[place] ?? 0,
+    taxMinor: money.taxParts[place] ?? 0,
+  };
+}
+
+function totalOf(lines: LineShare[], charges: ChargeShare[]): number {
+  const costs = exactSum(
+    lines.map((line) => line.costMinor),
+    'totalMinor',
+  );
+  return exactSum([costs, ...charges.map((charge) => charge.minor)], 'totalMinor');
+}
+
+function memberShare(
+  memberId: string,
+  place: number,
+  stands: Stand[],
+  charges: ChargeResult[],
+  currency: string,
+): MemberShare {
+  const ownLines = stands.map(({ result, index }) => lineShare(result, index));
+  const ownCharges = charges.map((result) => chargeShare(result, place));
+  const totalMinor = totalOf(ownLines, ownCharges);
+  let steps: ShareStep[] | undefined;
+  let why: string[] | undefined;
+  // A large club's arithmetic takes longer to write down than to do, and is seldom all read.
+  return {
+    memberId,
+    lines: ownLines,
+    charges: ownCharges,
+    totalMinor,
+    get steps() {
+      steps ??= [
+        ...stands.flatMap(({ result, index }) => lineSteps(result, index)),
+        ...charges.flatMap((result) => chargeSteps(result, place)),
+        { code: 'total', values: { minor: totalMinor } },
+      ];
+      return steps;
+    },
+    get why() {
+      why ??= this.steps.map((step) => explainStep(step, currency));
+      return why;
+    },
+  };
+}
+
+function shelfShare(lines: PlacedLine[], charges: ChargeResult[], members: number): ShelfShare {
+  const ownLines = lines.map((result) => lineShare(result, result.places.length));
+  const ownCharges = charges.map((result) => chargeShare(result, members));
+  return { lines: ownLines, charges: ownCharges, totalMinor: totalOf(ownLines, ownCharges) };
 }
 
 /**
@@ -112,24 +112,17 @@ function totalOf({ lines, charges }: Account): number {
 export function shareOut(request: ShareRequest): ShareSheet {
   const { lines, charges, members } = checkShareRequest(request);
   const places = new Map(members.map((memberId, place) => [memberId, place]));
-  const accounts = members.map(newAccount);
-  const shelf = newAccount();
+  const lineResults = lines.map((entry) => divideLine(entry, places));
+  const chargeResults = charges.map((entry) => divideCharge(entry, lineResults, members.length));
 
-  const results = lines.map((entry) => divideLine(entry, places, accounts, shelf));
-  for (const entry of charges) divideCharge(entry, results, accounts, shelf);
-
-  const shares = members.map((memberId, place) => {
-    const account = accounts[place] ?? newAccount();
-    const totalMinor = totalOf(account);
-    const steps = [...account.steps, { code: 'total', values: { minor: totalMinor } }];
-    const why = steps.map((step) => explainStep(step, request.currency));
-    return { memberId, lines: account.lines, charges: account.charges, totalMinor, steps, why };
-  });
-  const shelfTotal = totalOf(shelf);
-  const totals = [...shares.map((share) => share.totalMinor), shelfTotal];
-  return {
-    members: shares,
-    shelf: { lines: shelf.lines, charges: shelf.charges, totalMinor: shelfTotal },
-    totalMinor: exactSum(totals, 'totalMinor'),
-  };
+  const stands: Stand[][] = members.map(() => []);
+  for (const result of lineResults) {
+    result.places.forEach((place, index) => stands[place]?.push({ result, index }));
+  }
+  const shares = members.map((memberId, place) =>
+    memberShare(memberId, place, stands[place] ?? [], chargeResults, request.currency),
+  );
+  const shelf = shelfShare(lineResults, chargeResults, members.length);
+  const totals = [...shares.map((share) => share.totalMinor), shelf.totalMinor];
+  return { members: shares, shelf, totalMinor: exactSum(totals, 'totalMinor') };
 }
