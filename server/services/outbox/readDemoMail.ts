@@ -14,6 +14,8 @@ const ofDemoClubs = `
     select 1 from accounts a join memberships m on m.account_id = a.id join clubs c on c.id = m.club_id
     where lower(a.email) = lower(o.address) and not c.is_demo))`;
 
+const mostShown = 200;
+
 async function demoMessageIds(): Promise<Set<string>> {
   const rows = await select<{ message_id: string }>(
     `select o.message_id from outbox o where ${ofDemoClubs}`,
@@ -21,7 +23,7 @@ async function demoMessageIds(): Promise<Set<string>> {
   return new Set(rows.map((row) => row.message_id));
 }
 
-/** Mail of the demo clubs that the local mail server received, newest first, and how many still wait. */
+/** Mail of the demo clubs that the local mail server received, the newest 200 first to last, and how many still wait. */
 export async function listDemoMail(): Promise<OutboxList> {
   const ids = await demoMessageIds();
   const received = (await smtpFake()?.list()) ?? [];
@@ -32,6 +34,7 @@ export async function listDemoMail(): Promise<OutboxList> {
     waiting: row?.waiting ?? 0,
     mails: received
       .filter(({ messageId }) => ids.has(messageId))
+      .slice(0, mostShown)
       .map(({ id, from, to, subject, text, receivedAt, attachments }) => ({
         id,
         from,
