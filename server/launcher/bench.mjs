@@ -9,7 +9,7 @@ import { setUp } from './setUp.mjs';
 import { step } from './steps.mjs';
 
 await runCommand(async () => {
-  await setUp({ debian: ['postgresql', 'glpk-utils'] });
+  await setUp({ debian: ['postgresql', 'glpk-utils', 'chromium'] });
   let url;
   await step('Starting a throw-away PostgreSQL', async () => {
     url = await startThrowAway({ durable: true });
