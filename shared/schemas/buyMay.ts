@@ -21,6 +21,13 @@ export const BuyMay = z.strictObject({
   runSplit: z.boolean(),
   /** Whether the club bears what was lost above 2 %. */
   takeLoss: z.boolean(),
+  /** Who collects what, and whether it is paid. */
+  seeDesk: z.boolean(),
+  handOver: z.boolean(),
+  /** Times of hand-over, notices, reminders, what nobody fetched. */
+  runPickup: z.boolean(),
+  /** Who received reportable salts. */
+  seeRecords: z.boolean(),
   handOn: z.boolean(),
   seePayments: z.boolean(),
   /** Quotes, orders with suppliers, bills. */

@@ -55,6 +55,8 @@ export const PickupPerson = z.strictObject({
       by: z.string(),
       collectedBy: z.string(),
       portions: z.int(),
+      /** Whether the reader may take it back. */
+      mayUndo: z.boolean(),
     }),
   ),
   collectedAt: Instant.nullable(),

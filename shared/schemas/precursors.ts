@@ -19,7 +19,21 @@ export const PrecursorRecord = z.strictObject({
 });
 export type PrecursorRecord = z.infer<typeof PrecursorRecord>;
 
-export const RecordList = z.strictObject({ records: z.array(PrecursorRecord) });
+/** A reportable salt of a buy, for which a loss can be written down. */
+export const RecordedSalt = z.strictObject({
+  buyId: Id,
+  buyName: z.string(),
+  saltId: z.string(),
+  salt: z.string(),
+});
+export type RecordedSalt = z.infer<typeof RecordedSalt>;
+
+export const RecordList = z.strictObject({
+  records: z.array(PrecursorRecord),
+  salts: z.array(RecordedSalt),
+  /** How long the club keeps a record. */
+  months: z.int(),
+});
 export type RecordList = z.infer<typeof RecordList>;
 
 export const LossBody = z.strictObject({

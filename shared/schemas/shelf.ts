@@ -30,6 +30,8 @@ export const ShelfSale = z.strictObject({
   soldBy: z.string(),
   at: Instant,
   undone: z.boolean(),
+  /** Whether the reader may take it back. */
+  mayUndo: z.boolean(),
 });
 export type ShelfSale = z.infer<typeof ShelfSale>;
 

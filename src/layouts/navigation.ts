@@ -32,6 +32,7 @@ const places: Place[] = [
       { name: 'salts', label: 'Salts' },
       { name: 'suppliers', label: 'Suppliers' },
       { name: 'shelf', label: 'Shelf' },
+      { name: 'precursors', label: 'Records' },
       { name: 'settings', label: 'Settings' },
       { name: 'audit', label: 'Audit log' },
     ],

@@ -5,6 +5,7 @@ import { clubsRoutes } from 'src/router/routes/clubs.ts';
 import { ledgerRoutes } from 'src/router/routes/ledger.ts';
 import { noticesRoutes } from 'src/router/routes/notices.ts';
 import { saltsRoutes } from 'src/router/routes/salts.ts';
+import { shelfRoutes } from 'src/router/routes/shelf.ts';
 
 const layouts = {
   main: () => import('src/layouts/MainLayout.vue'),
@@ -32,6 +33,7 @@ const all: RouteRecordRaw[] = [
   ...accountsRoutes,
   ...clubsRoutes,
   ...saltsRoutes,
+  ...shelfRoutes,
   ...buysRoutes,
   ...ledgerRoutes,
   ...noticesRoutes,

@@ -5,6 +5,7 @@ import * as buys from '../../policies/buys.ts';
 import * as ledger from '../../policies/ledger.ts';
 import * as notices from '../../policies/notices.ts';
 import * as orders from '../../policies/orders.ts';
+import * as pickup from '../../policies/pickup.ts';
 import * as splits from '../../policies/splits.ts';
 
 /** Facts of the buy that an act depends on besides its state. */
@@ -47,6 +48,11 @@ export function mayWithBuy(actor: BuyStanding, facts: MayFacts): BuyMay {
     weigh: splits.canWeigh(actor) && isIn('splitting'),
     runSplit: splits.canRunSplit(actor) && isIn('ordered', 'arrived', 'splitting'),
     takeLoss: splits.canTakeLoss(actor) && isIn('arrived', 'splitting'),
+    seeDesk: pickup.canReadDesk(actor) && isIn('splitting', 'pickup', 'settled'),
+    handOver: pickup.canHandOver(actor) && isIn('pickup'),
+    runPickup:
+      pickup.canRunPickup(actor) && isIn('locked', 'ordered', 'arrived', 'splitting', 'pickup'),
+    seeRecords: pickup.canReadRecords(actor) && isIn('arrived', 'splitting', 'pickup', 'settled'),
     seeNotices: notices.canReadDeliveries(actor) && facts.opened,
     writeNotices: notices.canSendNotices(actor) && facts.opened,
     seePayments: ledger.canSeePaymentsOfBuy(actor) && facts.opened,

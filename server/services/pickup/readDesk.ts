@@ -69,7 +69,14 @@ interface PersonRow {
   unclaimed_at: Date | null;
   reminders: number;
   papers: string[];
-  handovers: { id: string; at: string; by: string; collectedBy: string; portions: number }[];
+  handovers: {
+    id: string;
+    at: string;
+    by: string;
+    byId: string;
+    collectedBy: string;
+    portions: number;
+  }[];
 }
 
 async function personRows(buyId: string, tx?: Tx): Promise<PersonRow[]> {
@@ -80,7 +87,7 @@ async function personRows(buyId: string, tx?: Tx): Promise<PersonRow[]> {
           where h.membership_id = m.id and h.on_paper_by_id is not null), '[]'::json) as papers,
         coalesce((select json_agg(json_build_object('id', h.id,
             'at', to_char(h.created_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.MS"Z"'),
-            'by', hb.display_name, 'collectedBy', h.collected_by,
+            'by', hb.display_name, 'byId', hb.id, 'collectedBy', h.collected_by,
             'portions', (select count(*) from portions p where p.handover_id = h.id)) order by h.created_at)
           from handovers h join memberships hb on hb.id = h.handed_by_id
           where h.buy_id = :buyId and h.membership_id = m.id and h.undone_at is null), '[]'::json) as handovers
@@ -127,7 +134,12 @@ export async function readDesk(actor: BuyActor, tx?: Tx): Promise<PickupDesk> {
       papersMissing: papersMissing(person, own),
       reportable: [...new Set(own.filter(({ reportable }) => reportable).map(({ salt }) => salt))],
       legalNameKnown: person.legal_name !== null && person.legal_name !== '',
-      handovers: person.handovers,
+      handovers: person.handovers.map(({ byId, ...made }) => ({
+        ...made,
+        mayUndo:
+          buy.state === 'pickup' &&
+          (actor.buy.organises || (actor.buy.helps && byId === actor.membershipId)),
+      })),
       collectedAt: person.collected_at?.toISOString() ?? null,
       unclaimedAt: person.unclaimed_at?.toISOString() ?? null,
       reminders: person.reminders,

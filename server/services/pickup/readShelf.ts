@@ -27,10 +27,11 @@ export async function readShelf(actor: ClubActor, tx?: Tx): Promise<Shelf> {
         mg: number;
         price_minor: number;
         sold_by: string;
+        sold_by_id: string;
         created_at: Date;
         undone_at: Date | null;
       }>(
-        `select x.id, s.salt_id, s.lot, m.display_name as name, x.mg, x.price_minor, o.display_name as sold_by,
+        `select x.id, s.salt_id, s.lot, m.display_name as name, x.mg, x.price_minor, o.display_name as sold_by, x.sold_by_id,
             x.created_at, x.undone_at
          from shelf_sales x join shelf_stock s on s.id = x.stock_id join memberships m on m.id = x.membership_id
          join memberships o on o.id = x.sold_by_id
@@ -90,6 +91,8 @@ export async function readShelf(actor: ClubActor, tx?: Tx): Promise<Shelf> {
       soldBy: row.sold_by,
       at: row.created_at.toISOString(),
       undone: row.undone_at !== null,
+      mayUndo:
+        row.undone_at === null && (actor.roles.organiser || row.sold_by_id === actor.membershipId),
     })),
     people: people.map((row) => ({
       membershipId: row.id,

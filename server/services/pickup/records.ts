@@ -81,8 +81,27 @@ export async function listRecords(actor: ClubActor, buyId?: string): Promise<Rec
      order by r.on_date desc, r.created_at desc, r.id`,
     { clubId: actor.club.id, ...(buyId ? { buyId } : {}) },
   );
-  const salts = await saltsByIds(actor.club.id, [...new Set(rows.map((row) => row.salt_id))]);
+  const lines = await select<{ buy_id: string; buy_name: string; salt_id: string }>(
+    `select b.id as buy_id, b.name as buy_name, l.salt_id from lines l join buys b on b.id = l.buy_id
+     where b.club_id = :clubId and l.removed_at is null ${buyId ? 'and b.id = :buyId' : "and b.state not in ('draft', 'open', 'cancelled')"}
+     order by b.created_at desc, b.id, l.position, l.id`,
+    { clubId: actor.club.id, ...(buyId ? { buyId } : {}) },
+  );
+  const [club] = await select<{ months: number }>(
+    'select precursor_months as months from clubs where id = :clubId',
+    { clubId: actor.club.id },
+  );
+  const salts = await saltsByIds(actor.club.id, [
+    ...new Set([...rows, ...lines].map((row) => row.salt_id)),
+  ]);
   return {
+    months: club?.months ?? 0,
+    salts: lines.flatMap((row) => {
+      const salt = salts.get(row.salt_id);
+      return salt?.reportable
+        ? [{ buyId: row.buy_id, buyName: row.buy_name, saltId: row.salt_id, salt: salt.name }]
+        : [];
+    }),
     records: rows.map((row) => ({
       id: row.id,
       kind: row.kind,

@@ -1,4 +1,5 @@
 import { apportion } from '#shared/domain/shares/apportion.ts';
+import { shelfPriceMinor } from '#shared/domain/shelf/shelfPrice.ts';
 import type { SaleBody, Shelf } from '#shared/schemas/shelf.ts';
 import { execute, select, transact, type Tx } from '../../config/database.ts';
 import type { ClubActor } from '../actors.ts';
@@ -11,11 +12,6 @@ import { saltsByIds } from '../salts/saltsOfClub.ts';
 import { readShelf } from './readShelf.ts';
 import { writeSaleRecord } from './saleRecords.ts';
 import { lockedStock, requireSeller, type StockRow } from './shelfStock.ts';
-
-/** Price of some milligrams at a price per kilogram, rounded half up to whole minor units. */
-export function priceOf(mg: number, priceMinorPerKg: number): number {
-  return Number((BigInt(mg) * BigInt(priceMinorPerKg) * 2n + 1_000_000n) / 2_000_000n);
-}
 
 async function requireBuyer(stock: StockRow, body: SaleBody, actor: ClubActor, tx: Tx) {
   const [buyer] = await select<{
@@ -113,7 +109,7 @@ export async function sellFromShelf(
       throw wrongState('Less than that is left of this lot.', { mg: stock.mg });
     }
     const { name, salt } = await requireBuyer(stock, body, actor, tx);
-    const priceMinor = priceOf(body.mg, stock.price_minor_per_kg);
+    const priceMinor = shelfPriceMinor(body.mg, stock.price_minor_per_kg);
     const { list, costMinor } = postings(stock, body, priceMinor);
     await execute(
       `insert into shelf_sales (id, club_id, stock_id, membership_id, mg, price_minor, cost_minor, sold_by_id)

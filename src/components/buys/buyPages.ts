@@ -43,6 +43,7 @@ export const pageOfNextStep = (code: string): string | null => pageOfNext[code] 
 const prepared: Partial<Record<BuyState, BuyState>> = {
   ordered: 'locked',
   arrived: 'ordered',
+  pickup: 'splitting',
   settled: 'pickup',
 };
 

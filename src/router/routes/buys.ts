@@ -53,6 +53,18 @@ export const buysRoutes: RouteRecordRaw[] = [
         props: true,
       },
       {
+        path: 'pickup',
+        name: 'buy-pickup',
+        component: () => import('src/pages/buys/BuyPickupPage.vue'),
+        props: true,
+      },
+      {
+        path: 'precursors',
+        name: 'buy-precursors',
+        component: () => import('src/pages/buys/BuyPrecursorsPage.vue'),
+        props: true,
+      },
+      {
         path: 'notices',
         name: 'buy-notices',
         component: () => import('src/pages/buys/BuyNoticesPage.vue'),

@@ -2,7 +2,6 @@ import { randomUUID } from 'node:crypto';
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { Shelf } from '#shared/schemas/shelf.ts';
 import { select } from '#server/config/database.ts';
-import { priceOf } from '#server/services/pickup/sellFromShelf.ts';
 import type { Agent } from '#tests/support/client.ts';
 import type { LockedWorld } from '#tests/support/locked.ts';
 import { makePickupWorld } from '#tests/support/pickupWorld.ts';
@@ -112,12 +111,6 @@ describe('shelf', () => {
     );
     expect(replies.filter(({ status }) => status === 200)).toHaveLength(2);
     expect(replies.filter(({ status }) => status === 409)).toHaveLength(3);
-  });
-
-  it('rounds a price half up', () => {
-    expect(priceOf(1, 500_000)).toBe(1);
-    expect(priceOf(1, 499_999)).toBe(0);
-    expect(priceOf(300_000, 450)).toBe(135);
   });
 
   it('is sold by organisers and today’s helpers alone', async () => {
