@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdtempSync, realpathSync, rmSync, writeFileSync } from 'node:fs';
 import { readFile, readdir } from 'node:fs/promises';
 import path from 'node:path';
 import { gzipSync } from 'node:zlib';
@@ -22,7 +22,9 @@ async function sheetBytes(ground: Ground): Promise<number> {
   });
   try {
     const context = await browser.newContext({ baseURL: ground.origin });
-    const [name = '', value = ''] = (await ground.signIn(ground.seeded.members[0]?.email ?? '')).split('=');
+    const [name = '', value = ''] = (
+      await ground.signIn(ground.seeded.members[0]?.email ?? '')
+    ).split('=');
     await context.addCookies([{ name, value, url: ground.origin }]);
     const page = await context.newPage();
     let bytes = 0;
@@ -60,7 +62,9 @@ createApp(App).use(Quasar, {}).use(createPinia())
 /** Script and style of a page with one field and one button, with router and store, gzipped, in bytes. */
 async function minimalBytes(): Promise<number> {
   // Inside the project, so that packages are found.
-  const root = mkdtempSync(path.join(project, 'node_modules', '.minimal-'));
+  const root = mkdtempSync(
+    path.join(realpathSync(path.join(project, 'node_modules')), '.minimal-'),
+  );
   try {
     writeFileSync(path.join(root, 'main.ts'), minimalApp);
     writeFileSync(
