@@ -1,3 +1,4 @@
+import type { BuyHeader } from '#shared/schemas/buys.ts';
 import { computed, watch } from 'vue';
 import { useLoad } from 'src/composables/useLoad.ts';
 import { useBuysStore } from 'src/stores/buys.ts';
@@ -7,11 +8,14 @@ import { useOrdersStore } from 'src/stores/orders.ts';
 type Part = 'loadLocked' | 'loadOrders' | 'loadBills' | 'loadSettling';
 
 /** A locked buy's page: loads its parts, and again whenever the buy's head changed, and gives what can be done. */
-export function useOrders(place: { club: string; buy: string }, parts: () => Part[]) {
+export function useOrders(
+  place: { club: string; buy: string },
+  parts: (head: BuyHeader | null) => Part[],
+) {
   const store = useOrdersStore();
   const buys = useBuysStore();
   const head = computed(() => buys.headOf(place.buy));
-  const load = () => Promise.all(parts().map((part) => store[part](place)));
+  const load = () => Promise.all(parts(head.value).map((part) => store[part](place)));
   const { problem, reload } = useLoad(load);
   // What others do arrives as a newer head; until it can be read what is shown stays.
   watch(
