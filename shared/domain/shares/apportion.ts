@@ -11,16 +11,27 @@ function fitsDouble(total: number, weights: readonly number[]): boolean {
   return sum <= Number.MAX_SAFE_INTEGER && total * most <= Number.MAX_SAFE_INTEGER;
 }
 
-/** Gives one unit more to the largest remainders; equal ones to the earlier index. */
-function giveRest<T extends number | bigint>(parts: number[], remainders: T[], rest: number): void {
+/**
+ * Gives one unit more to the largest remainders; equal ones to the earlier index.
+ *
+ * @param ascending the remainders sorted
+ */
+function giveRest<T extends number | bigint>(
+  parts: number[],
+  remainders: ArrayLike<T>,
+  ascending: ArrayLike<T>,
+  rest: number,
+): void {
   if (rest === 0) return;
-  const order = Array.from(remainders.keys()).sort((a, b) => {
-    const [left, right] = [remainders[a] as T, remainders[b] as T];
-    return left === right ? a - b : left < right ? 1 : -1;
-  });
-  for (let i = 0; i < rest; i++) {
-    const index = order[i] as number;
-    parts[index] = (parts[index] as number) + 1;
+  const edge = ascending[ascending.length - rest] as T;
+  let atEdge = 0;
+  for (let i = ascending.length - rest; i < ascending.length && ascending[i] === edge; i++) {
+    atEdge++;
+  }
+  for (let i = 0; i < parts.length; i++) {
+    const remainder = remainders[i] as T;
+    if (remainder < edge || (remainder === edge && atEdge-- <= 0)) continue;
+    parts[i] = (parts[i] as number) + 1;
   }
 }
 
@@ -35,23 +46,25 @@ function apportionExact(total: bigint, weights: readonly number[]): number[] {
     given += part;
     return safeNumber(part, 'part');
   });
-  giveRest(parts, remainders, Number(total - given));
+  const ascending = [...remainders].sort((a, b) => (a < b ? -1 : a > b ? 1 : 0));
+  giveRest(parts, remainders, ascending, Number(total - given));
   return parts;
 }
 
 function apportionFast(total: number, weights: readonly number[]): number[] {
-  const sum = weights.reduce((a, weight) => a + weight, 0);
-  const remainders: number[] = [];
+  let sum = 0;
+  for (const weight of weights) sum += weight;
+  const remainders = new Float64Array(weights.length);
   let given = 0;
-  const parts = weights.map((weight) => {
+  const parts = weights.map((weight, index) => {
     const product = total * weight;
     const remainder = product % sum;
     const part = (product - remainder) / sum;
-    remainders.push(remainder);
+    remainders[index] = remainder;
     given += part;
     return part;
   });
-  giveRest(parts, remainders, total - given);
+  giveRest(parts, remainders, remainders.slice().sort(), total - given);
   return parts;
 }
 

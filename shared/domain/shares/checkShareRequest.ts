@@ -3,10 +3,10 @@ import { currencyExponent } from '../money/currencies.ts';
 import { compareIds, compareTurns, instantMs } from './pledgeOrder.ts';
 import type { ShareCharge, ShareLine, SharePledge, ShareRequest } from './shareTypes.ts';
 
-/** A pledge with its instant read. */
+/** A pledge with its instant read; `member` is the member's number in this request. */
 export type Turn = {
+  member: number;
   memberId: string;
-  lineId: string;
   wantedMg: number;
   upToMg: number | undefined;
   atMs: number;
@@ -18,6 +18,8 @@ export type CheckedRequest = {
   charges: { charge: ShareCharge; lineIds: Set<string> }[];
   /** Members in their order: earliest pledge above zero, then lower id. */
   members: string[];
+  /** The place in that order by a member's number. */
+  places: number[];
 };
 
 function checkRate(rate: number | undefined, field: string): void {
@@ -73,16 +75,31 @@ function sortedById<T extends { id: string }>(things: readonly T[], field: strin
   return sorted;
 }
 
-function memberOrder(turns: readonly Turn[]): string[] {
-  const first = new Map<string, { atMs: number; memberId: string; asks: boolean }>();
-  for (const { memberId, atMs, wantedMg, upToMg = 0 } of turns) {
-    const known = first.get(memberId);
+/** What decides a member's place: the earliest pledge that asks for something. */
+type First = { number: number; memberId: string; atMs: number; asks: boolean };
+
+/** Members by number in the order in which they were met. */
+class Members {
+  readonly firsts: First[] = [];
+  readonly #numbers = new Map<string, First>();
+
+  meet(pledge: SharePledge, atMs: number): number {
+    const { memberId, wantedMg, upToMg = 0 } = pledge;
     const asks = wantedMg > 0 || upToMg > 0;
+    const known = this.#numbers.get(memberId);
+    if (!known) {
+      const first = { number: this.firsts.length, memberId, atMs, asks };
+      this.#numbers.set(memberId, first);
+      this.firsts.push(first);
+      return first.number;
+    }
     // An empty pledge gives a place only to a member who has no other.
-    const earlier = !known || (asks === known.asks ? atMs < known.atMs : asks);
-    if (earlier) first.set(memberId, { atMs, memberId, asks });
+    if (asks === known.asks ? atMs < known.atMs : asks) {
+      known.atMs = atMs;
+      known.asks = asks;
+    }
+    return known.number;
   }
-  return [...first.values()].sort(compareTurns).map(({ memberId }) => memberId);
 }
 
 /**
@@ -94,41 +111,39 @@ function memberOrder(turns: readonly Turn[]): string[] {
 export function checkShareRequest(request: ShareRequest): CheckedRequest {
   currencyExponent(request.currency);
   const lines = sortedById(request.lines, 'lines');
-  const byLine = new Map(
-    lines.map((line) => [line.id, { line, pledges: [] as Turn[], members: new Set<string>() }]),
-  );
   lines.forEach(checkLine);
+  const entries = lines.map((line, number) => ({ line, number, pledges: [] as Turn[] }));
+  const byLine = new Map(entries.map((entry) => [entry.line.id, entry]));
 
-  const turns: Turn[] = [];
+  const members = new Members();
+  const seen = new Set<number>();
   for (const pledge of request.pledges) {
     const { memberId, lineId, wantedMg, upToMg } = pledge;
     const entry = byLine.get(lineId);
     if (!entry) throw new RangeError(`pledge of ${memberId}: lineId names no line: ${lineId}`);
-    if (entry.members.has(memberId)) {
-      throw new RangeError(`pledge of ${memberId} on ${lineId}: there are two`);
-    }
-    entry.members.add(memberId);
-    checkSteps(wantedMg, entry.line.stepMg, pledge, 'wantedMg');
-    if (upToMg !== undefined) checkSteps(upToMg, entry.line.stepMg, pledge, 'upToMg');
-    const turn: Turn = {
-      memberId,
-      lineId,
-      wantedMg,
-      upToMg,
-      atMs: instantMs(pledge.at, 'pledge.at'),
-    };
-    entry.pledges.push(turn);
-    turns.push(turn);
+    const { stepMg } = entry.line;
+    checkSteps(wantedMg, stepMg, pledge, 'wantedMg');
+    if (upToMg !== undefined) checkSteps(upToMg, stepMg, pledge, 'upToMg');
+    const atMs = instantMs(pledge.at, 'pledge.at');
+    const member = members.meet(pledge, atMs);
+    const key = member * lines.length + entry.number;
+    if (seen.has(key)) throw new RangeError(`pledge of ${memberId} on ${lineId}: there are two`);
+    seen.add(key);
+    entry.pledges.push({ member, memberId, wantedMg, upToMg, atMs });
   }
-  for (const { pledges } of byLine.values()) pledges.sort(compareTurns);
+  for (const { pledges } of entries) pledges.sort(compareTurns);
 
+  const order = members.firsts.sort(compareTurns);
+  const places: number[] = [];
+  order.forEach(({ number }, place) => (places[number] = place));
   const lineIds: ReadonlySet<string> = new Set(byLine.keys());
   return {
-    lines: [...byLine.values()],
+    lines: entries,
     charges: sortedById(request.charges, 'charges').map((charge) => ({
       charge,
       lineIds: checkCharge(charge, lineIds),
     })),
-    members: memberOrder(turns),
+    members: order.map(({ memberId }) => memberId),
+    places,
   };
 }

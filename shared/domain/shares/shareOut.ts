@@ -20,12 +20,12 @@ type Stand = { result: PlacedLine; index: number };
 
 function divideLine(
   { line, pledges }: CheckedRequest['lines'][number],
-  places: ReadonlyMap<string, number>,
+  places: number[],
 ): PlacedLine {
   const grams = divideGrams(line, pledges);
   const shelfWeight = line.shelfPays === false ? 0 : grams.shelfMg;
   const money = divideMoney(line.costMinor, [...grams.mg, shelfWeight], line.taxRate);
-  return { line, grams, money, places: pledges.map((p) => places.get(p.memberId) ?? 0) };
+  return { line, grams, money, places: pledges.map(({ member }) => places[member] ?? 0) };
 }
 
 function divideCharge(
@@ -110,8 +110,7 @@ function shelfShare(lines: PlacedLine[], charges: ChargeResult[], members: numbe
  * @throws RangeError naming the field, see `checkShareRequest`; past the safe integers too
  */
 export function shareOut(request: ShareRequest): ShareSheet {
-  const { lines, charges, members } = checkShareRequest(request);
-  const places = new Map(members.map((memberId, place) => [memberId, place]));
+  const { lines, charges, members, places } = checkShareRequest(request);
   const lineResults = lines.map((entry) => divideLine(entry, places));
   const chargeResults = charges.map((entry) => divideCharge(entry, lineResults, members.length));
 
