@@ -1,5 +1,6 @@
 import {
   decidePledge,
+  loweringEnds,
   plainWish,
   type PledgeFacts,
   type PledgeVerdict,
@@ -10,11 +11,17 @@ import type { BuyActor } from '../actors.ts';
 import { byActor } from '../buys/withBuy.ts';
 import { overdueElsewhere } from '../ledger/owed.ts';
 import { DomainProblem, forbidden, invalid, notFound, stale } from '../problem.ts';
-import { lockForPledge, readPledgeGround, writePledge } from './pledgeRows.ts';
-import type { LockedBuy, PledgeGround } from './pledgeRows.ts';
+import {
+  lockForPledge,
+  readPledgeGround,
+  totalOfLine,
+  writePledge,
+  writePledgeIfUnchanged,
+} from './pledgeRows.ts';
+import type { PledgeGround, PledgeWrite, WrittenPledge } from './pledgeRows.ts';
 import { proposePledge } from './proposePledge.ts';
 import { careOfSalt } from './saltOfLine.ts';
-import { tellPledge } from './tellPledge.ts';
+import { tellMember, tellSheets } from './tellPledge.ts';
 
 interface Where {
   readonly lineId: string;
@@ -39,78 +46,120 @@ function refusal(verdict: Extract<PledgeVerdict, { ok: false }>, now: PledgeChan
 }
 
 async function factsFor(
-  buy: LockedBuy,
+  { membershipId }: Where,
   ground: PledgeGround,
-  { membershipId, own }: { membershipId: string; own: boolean },
+  who: PledgeFacts['who'],
   classified: boolean,
-  tx: Tx,
+  tx?: Tx,
 ): Promise<PledgeFacts> {
-  const overdue = ground.overdue_somewhere ? await overdueElsewhere(membershipId, buy.id, tx) : [];
+  const overdue = ground.overdue_somewhere
+    ? await overdueElsewhere(membershipId, ground.id, tx)
+    : [];
   return {
-    state: buy.state,
-    frozen: buy.frozen_at !== null,
+    state: ground.state,
+    frozen: ground.frozen_at !== null,
     nowMs: ground.now.getTime(),
-    closesAtMs: buy.closes_at?.getTime() ?? null,
-    loweringFreezeHours: buy.lowering_freeze_hours,
+    closesAtMs: ground.closes_at?.getTime() ?? null,
+    loweringFreezeHours: ground.lowering_freeze_hours,
     stepMg: ground.step_mg,
     before:
       ground.version === null ? null : { wantedMg: ground.wanted_mg ?? 0, upToMg: ground.up_to_mg },
-    who: own ? 'member' : ground.member_guest ? 'organiserForGuest' : 'organiser',
+    who,
     unconfirmed: classified && !ground.confirmed,
     overdueIn: overdue[0]?.buyName ?? null,
   };
 }
 
-/** `changePledge` inside a transaction that has more to do. */
+/** What was decided on one reading of the ground. */
+async function decide(actor: BuyActor, where: Where, body: PledgeBody, tx?: Tx) {
+  const ground = await readPledgeGround(actor.buy.id, where, tx);
+  if (!ground) throw notFound('This line or member');
+  const own = where.membershipId === actor.membershipId;
+  const who = own ? 'member' : ground.member_guest ? 'organiserForGuest' : 'organiser';
+  const wish = plainWish(body);
+  const salt = await careOfSalt(ground.club_id, ground.salt_id, tx);
+  const facts = await factsFor(where, ground, who, salt.classified, tx);
+  const now = present(where, ground);
+  const verdict = decidePledge(facts, wish);
+  if (!verdict.ok) throw refusal(verdict, now);
+  if (verdict.act !== 'keep' && body.version !== now.version) {
+    throw stale('This pledge was changed on another screen. This is what it is now.', now);
+  }
+  if (!ground.member_active && wish.wantedMg > now.wantedMg) {
+    throw invalid({ wantedMg: `${ground.member_name} is no longer in the club.` });
+  }
+  const write: PledgeWrite = {
+    buyId: ground.id,
+    clubId: ground.club_id,
+    ...where,
+    ...wish,
+    keepsTurn: verdict.act === 'save' && verdict.keepsTurn && facts.before !== null,
+    by: byActor(actor),
+    before: facts.before,
+  };
+  return { ground, wish, salt, facts, now, verdict, write, own };
+}
+
+type Decision = Awaited<ReturnType<typeof decide>>;
+
+function replyWith({ now, wish }: Decision, written: WrittenPledge): PledgeReply {
+  const pledge = { ...now, ...wish, version: written.version, at: written.at.toISOString() };
+  return { sheetVersion: written.sheet_version, pledge, proposed: false };
+}
+
+/** `changePledge` under the buy's lock, inside a transaction that may have more to do. */
 export async function changePledgeIn(
   tx: Tx,
   actor: BuyActor,
   where: Where,
   body: PledgeBody,
 ): Promise<PledgeReply> {
-  const own = where.membershipId === actor.membershipId;
-  const wish = plainWish(body);
-  const buy = await lockForPledge(actor.buy.id, tx);
-  const ground = buy && (await readPledgeGround(buy.id, where.lineId, where.membershipId, tx));
-  if (!buy || !ground) throw notFound('This line or member');
-  const salt = await careOfSalt(buy.club_id, ground.salt_id, tx);
-  const facts = await factsFor(buy, ground, { ...where, own }, salt.classified, tx);
-  const now = present(where, ground);
+  await lockForPledge(actor.buy.id, tx);
+  const decision = await decide(actor, where, body, tx);
+  const { ground, wish, salt, now, verdict, own } = decision;
   const unchanged = { sheetVersion: actor.buy.sheetVersion, pledge: now };
-
-  const verdict = decidePledge(facts, wish);
-  if (!verdict.ok) throw refusal(verdict, now);
   if (verdict.act === 'keep') return { ...unchanged, proposed: false };
-  if (body.version !== now.version) {
-    throw stale('This pledge was changed on another screen. This is what it is now.', now);
-  }
-  if (!ground.member_active && wish.wantedMg > now.wantedMg) {
-    throw invalid({ wantedMg: `${ground.member_name} is no longer in the club.` });
-  }
   if (verdict.act === 'propose') {
-    await proposePledge(actor, buy, { ...where, ...wish, saltName: salt.name }, tx);
+    await proposePledge(actor, ground, { ...where, ...wish, saltName: salt.name }, tx);
     return { ...unchanged, proposed: true };
   }
-  const { before } = facts;
-  const change = { buyId: buy.id, clubId: buy.club_id, ...where, ...wish, before };
-  const keepsTurn = verdict.keepsTurn && before !== null;
-  const written = await writePledge({ ...change, keepsTurn, by: byActor(actor) }, tx);
-  const pledge = { ...now, ...wish, version: written.version, at: written.at.toISOString() };
-  const { sheet_version: sheetVersion } = written;
-  await tellPledge(
-    tx,
-    { buyId: buy.id, sheetVersion, pledge },
-    {
-      hidden: ground.hides_reportable && salt.reportable,
-      ...(own ? {} : { changedFor: { actor, buy, salt, before: now } }),
-    },
-  );
-  return { sheetVersion, pledge, proposed: false };
+  const reply = replyWith(decision, await writePledge(decision.write, tx));
+  if (!own) await tellMember(tx, reply.pledge, { actor, buy: ground, salt, before: now });
+  const hidden = ground.hides_reportable && salt.reportable;
+  const total = hidden ? await totalOfLine(where.lineId, tx) : null;
+  tx.afterCommit(() => tellSheets(ground.id, reply, total));
+  return reply;
+}
+
+/** Decides on what stands now and writes if it still stands under the lock; null leaves it to the careful way. */
+async function changeAtOnce(
+  actor: BuyActor,
+  where: Where,
+  body: PledgeBody,
+): Promise<PledgeReply | null> {
+  const decision = await decide(actor, where, body);
+  const { ground, salt, facts, now, verdict } = decision;
+  if (verdict.act === 'keep') {
+    return { sheetVersion: actor.buy.sheetVersion, pledge: now, proposed: false };
+  }
+  const hidden = ground.hides_reportable && salt.reportable;
+  if (verdict.act !== 'save' || hidden) return null;
+  const lowers = decision.wish.wantedMg < now.wantedMg;
+  const written = await writePledgeIfUnchanged(decision.write, {
+    termsVersion: ground.terms_version,
+    version: now.version,
+    beforeMs: lowers ? loweringEnds(facts) : null,
+  });
+  if (!written) return null;
+  const reply = replyWith(decision, written);
+  tellSheets(ground.id, reply, null);
+  return reply;
 }
 
 /**
- * Sets what a member wants on a line, for oneself or, as an organiser of the buy, for someone. One transaction: the
- * buy's lock, one read, one write. A repeat of what already stands changes nothing.
+ * Sets what a member wants on a line, for oneself or, as an organiser of the buy, for someone. One's own goes in one
+ * statement that takes the buy's lock and looks again; everything else in one transaction: lock, read, write. A repeat
+ * of what already stands changes nothing.
  * @throws DomainProblem 403 for another's pledge without organising the buy; 404; 409 `buy_locked`, `buy_frozen`,
  * `closing_soon`, `overdue_elsewhere`, `hazard_unconfirmed`, `stale`; 422 for grams that aren't whole steps
  */
@@ -119,8 +168,10 @@ export async function changePledge(
   where: Where,
   body: PledgeBody,
 ): Promise<PledgeReply> {
-  if (where.membershipId !== actor.membershipId && !actor.buy.organises) {
+  const own = where.membershipId === actor.membershipId;
+  if (!own && !actor.buy.organises) {
     throw forbidden("Only an organiser of the buy changes someone else's pledge.");
   }
-  return transact((tx) => changePledgeIn(tx, actor, where, body));
+  const reply = own ? await changeAtOnce(actor, where, body) : null;
+  return reply ?? transact((tx) => changePledgeIn(tx, actor, where, body));
 }

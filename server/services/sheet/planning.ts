@@ -5,11 +5,14 @@ import { logger } from '../../config/logger.ts';
 import { publishToBuy } from '../../sockets/publish.ts';
 import { dropChosenPacks } from './choosePacks.ts';
 import { planWithin } from './plannerThread.ts';
-import { loadSheetRow } from './sheetRow.ts';
+import { loadPlanGround } from './planGround.ts';
 
 const budgetMs = 2_000;
 const gatherMs = 25;
+const mostRestMs = 500;
 const mostRounds = 50;
+
+const rest = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
 
 /** Buys being planned by this process; `true`: something changed meanwhile. */
 const planning = new Map<string, boolean>();
@@ -26,13 +29,12 @@ async function store(buyId: string, forVersion: number, plan: PackPlan): Promise
 
 /** Plans for the newest version; false when there was nothing to plan. */
 async function planNewest(buyId: string): Promise<boolean> {
-  const row = await loadSheetRow(buyId);
-  if (!row || !['draft', 'open'].includes(row.terms.state)) return false;
-  const { sheetVersion: forVersion, terms, pledges, plan: known } = row;
-  if (known?.forVersion === forVersion) return false;
-  const plan = await planWithin(packRequestOf(terms, pledges), budgetMs);
-  const chosen = row.planOverride;
-  if (chosen && !planInForce(terms, pledges, plan, chosen).overridden) {
+  const ground = await loadPlanGround(buyId);
+  if (!ground || !['draft', 'open'].includes(ground.terms.state)) return false;
+  const { sheetVersion: forVersion, terms, pooled, chosen } = ground;
+  if (ground.planVersion === forVersion) return false;
+  const plan = await planWithin(packRequestOf(terms, pooled), budgetMs);
+  if (chosen && !planInForce(terms, pooled, plan, chosen).overridden) {
     await dropChosenPacks(buyId, forVersion);
   }
   if (await store(buyId, forVersion, plan)) {
@@ -55,8 +57,11 @@ async function planUntilNewest(buyId: string): Promise<void> {
     try {
       for (let round = 0; round < mostRounds; round += 1) {
         planning.set(buyId, false);
+        const began = performance.now();
         const planned = await planNewest(buyId);
         if (!planned && !planning.get(buyId)) return;
+        // Half of the time is left to whoever pledges; what comes meanwhile is planned together.
+        await rest(Math.min(performance.now() - began, mostRestMs));
       }
     } finally {
       await client.query('select pg_advisory_unlock(hashtextextended($1, 0))', [key]);

@@ -3,13 +3,13 @@ import type { BuyActor } from '../actors.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { byActor } from '../buys/withBuy.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
-import type { LockedBuy } from './pledgeRows.ts';
+import type { PledgeBuy } from './pledgeRows.ts';
 import { sayPledge } from './tellPledge.ts';
 
 /** Asks a member whether their pledge may be raised; a later question about the same line replaces the earlier one. */
 export async function proposePledge(
   actor: BuyActor,
-  buy: LockedBuy,
+  buy: PledgeBuy,
   wish: {
     lineId: string;
     membershipId: string;

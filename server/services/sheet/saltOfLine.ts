@@ -8,7 +8,7 @@ import { findSalt } from '../salts/saltsOfClub.ts';
 export async function careOfSalt(
   clubId: string,
   saltId: string,
-  tx: Tx,
+  tx?: Tx,
 ): Promise<Pick<LineSalt, 'name' | 'classified' | 'reportable'>> {
   if (findCatalogueSalt(saltId)) return describeLineSalt(saltId, null);
   const own = await findSalt(clubId, saltId, tx);

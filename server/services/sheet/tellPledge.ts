@@ -1,10 +1,10 @@
 import { formatMass } from '#shared/domain/mass/formatMass.ts';
-import type { PledgeChange } from '#shared/schemas/sheet.ts';
+import type { LineTotal, PledgeChange, PledgeReply } from '#shared/schemas/sheet.ts';
 import type { Tx } from '../../config/database.ts';
 import { publishToBuy } from '../../sockets/publish.ts';
 import type { BuyActor } from '../actors.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
-import { totalOfLine, type LockedBuy } from './pledgeRows.ts';
+import type { PledgeBuy } from './pledgeRows.ts';
 import { requestPlan } from './planning.ts';
 
 /** Grams as a notice says them: "1 200 g, up to 1 500 g". */
@@ -21,12 +21,13 @@ export function sayPledge({
 
 interface ChangedFor {
   readonly actor: BuyActor;
-  readonly buy: LockedBuy;
+  readonly buy: PledgeBuy;
   readonly salt: { name: string };
   readonly before: PledgeChange;
 }
 
-async function tellMember(tx: Tx, pledge: PledgeChange, made: ChangedFor): Promise<void> {
+/** Tells a member that an organiser changed their pledge. */
+export async function tellMember(tx: Tx, pledge: PledgeChange, made: ChangedFor): Promise<void> {
   const { actor, buy, salt, before } = made;
   await queueNotice(tx, {
     clubId: buy.club_id,
@@ -46,25 +47,15 @@ async function tellMember(tx: Tx, pledge: PledgeChange, made: ChangedFor): Promi
 }
 
 /**
- * Tells of a written pledge: its member when an organiser changed it, and after the commit the open sheets and the
- * planner. `hidden`: the club shows only the line's total, so the message carries no person.
+ * Tells the open sheets and the planner of a pledge that is committed. With `total` the club shows no more than that
+ * of the line, so the message carries no person.
  */
-export async function tellPledge(
-  tx: Tx,
-  told: { buyId: string; sheetVersion: number; pledge: PledgeChange },
-  how: { hidden: boolean; changedFor?: ChangedFor },
-): Promise<void> {
-  const { buyId, sheetVersion, pledge } = told;
-  if (how.changedFor) await tellMember(tx, pledge, how.changedFor);
-  const total = how.hidden ? await totalOfLine(pledge.lineId, tx) : null;
-  tx.afterCommit(() => {
-    publishToBuy(buyId, 'buy:changed', {
-      kind: 'pledge',
-      buyId,
-      sheetVersion,
-      pledge: how.hidden ? null : pledge,
-      total,
-    });
-    requestPlan(buyId);
-  });
+export function tellSheets(
+  buyId: string,
+  { sheetVersion, pledge }: Pick<PledgeReply, 'sheetVersion' | 'pledge'>,
+  total: LineTotal | null,
+): void {
+  const change = { buyId, sheetVersion, pledge: total ? null : pledge, total };
+  publishToBuy(buyId, 'buy:changed', { kind: 'pledge', ...change });
+  requestPlan(buyId);
 }

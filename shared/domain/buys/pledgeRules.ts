@@ -87,14 +87,17 @@ function wrongSteps(wish: PledgeWish, stepMg: number) {
   return Object.keys(errors).length > 0 ? errors : null;
 }
 
+type ClosingFacts = { closesAtMs: number | null; loweringFreezeHours: number };
+
+/** Until when members lower their own pledges, in ms; null: without end. */
+export function loweringEnds({ closesAtMs, loweringFreezeHours }: ClosingFacts): number | null {
+  return closesAtMs === null ? null : closesAtMs - loweringFreezeHours * hourMs;
+}
+
 /** Whether lowering needs the organiser now: the last hours before closing. */
-export function loweringFrozen(facts: {
-  nowMs: number;
-  closesAtMs: number | null;
-  loweringFreezeHours: number;
-}): boolean {
-  const { nowMs, closesAtMs, loweringFreezeHours } = facts;
-  return closesAtMs !== null && nowMs >= closesAtMs - loweringFreezeHours * hourMs;
+export function loweringFrozen(facts: ClosingFacts & { nowMs: number }): boolean {
+  const end = loweringEnds(facts);
+  return end !== null && facts.nowMs >= end;
 }
 
 /**
