@@ -28,7 +28,6 @@ export default defineConfig(() => ({
     open: false,
     proxy: {
       '/api': api,
-      '/outbox': api,
       '/healthz': api,
       '/socket.io': { ...api, ws: true },
     },
