@@ -81,7 +81,8 @@ export function expectBill(
       chargeId: charge.id,
     }),
   );
-  if (!order) return { goods: [], charges: charges.length > 0 ? charges : [newCharge()] };
+  if (!order)
+    return { goods: [], charges: charges.length > 0 ? charges : [newCharge({ basis: 'mass' })] };
   const goods = order.packs.map((pack) => ({
     offerId: pack.offerId,
     label: say(pack),
