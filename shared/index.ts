@@ -49,6 +49,7 @@ export {
   type PackPrice,
   type PackProblem,
 } from './domain/packs/pricePacks.ts';
+export { explainObstacle, packObstacle, type PackObstacle } from './domain/packs/packObstacle.ts';
 export { shippingCost } from './domain/packs/shippingCost.ts';
 export type {
   NextStep,

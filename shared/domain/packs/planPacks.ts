@@ -5,6 +5,7 @@ import { Budget, OutOfTime } from './clock.ts';
 import { LineCovers } from './lineCovers.ts';
 import { goodsOf, nextStepOf, type Step } from './nextStep.ts';
 import { packModel, type PackModel } from './packModel.ts';
+import { explainObstacle, packObstacle } from './packObstacle.ts';
 import type { NextStep, PackPlan, PackRequest } from './packTypes.ts';
 import type { LimitPrices } from './priceLimits.ts';
 import { perGram, pricePacks } from './pricePacks.ts';
@@ -21,19 +22,6 @@ function nothing(reason: string, exact: boolean): PackPlan {
     totalMinor: 0,
     leftOverMg: {},
   };
-}
-
-function whyInfeasible(request: PackRequest, model: PackModel): string {
-  for (const { items, need, index } of model.lines) {
-    const id = request.lines[index]?.id ?? '';
-    if (need === 0) continue;
-    if (items.length === 0) return `Line ${id} has no offer that can be bought.`;
-    const most = items.reduce((sum, { mass, max }) => sum + mass * max, 0);
-    if (most < need) {
-      return `Line ${id} needs ${need / 1000} g, and all packs in stock hold ${most / 1000} g.`;
-    }
-  }
-  return "No choice of packs covers every line within the suppliers' minimum orders and shipping tables.";
 }
 
 function toPacks(model: PackModel, plan: CandidatePlan): Record<string, number> {
@@ -74,7 +62,9 @@ export function planPacks(request: PackRequest, budgetMs?: number): PackPlan {
   const memory = new Map<string, LimitPrices>();
   const { plan, exact } = bestPlan(model, covers, budget, memory);
   if (!plan) {
-    const reason = exact ? whyInfeasible(request, model) : 'No plan was found in the time given.';
+    const reason = exact
+      ? explainObstacle(packObstacle(request))
+      : 'No plan was found in the time given.';
     return nothing(reason, exact);
   }
 

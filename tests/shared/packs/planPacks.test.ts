@@ -1,29 +1,6 @@
 import { describe, expect, it, test } from 'vitest';
-import {
-  planPacks,
-  type PackOffer,
-  type PackRequest,
-  type PackSupplier,
-  type Shipping,
-} from '#shared/index.ts';
-
-const kg = 1_000_000;
-
-function offer(id: string, kilos: number, priceMinor: number, over: Partial<PackOffer> = {}) {
-  return { id, lineId: 'kno3', supplierId: 'mill', packMg: kilos * kg, priceMinor, ...over };
-}
-
-function supplier(over: Partial<PackSupplier> = {}): PackSupplier {
-  return { id: 'mill', shipping: { kind: 'flat', minor: 0 }, ...over };
-}
-
-function request(
-  need: number,
-  offers: PackOffer[],
-  suppliers: PackSupplier[] = [supplier()],
-): PackRequest {
-  return { lines: [{ id: 'kno3', neededMg: need * kg }], offers, suppliers };
-}
+import { planPacks, type PackOffer, type PackSupplier, type Shipping } from '#shared/index.ts';
+import { kg, offer, packRequest as request, supplier } from '#tests/support/packBuilders.ts';
 
 function plan(...args: Parameters<typeof request>) {
   const { feasible, packs, totalMinor, shippingMinor } = planPacks(request(...args));
@@ -223,73 +200,5 @@ describe("a supplier's terms", () => {
       offer('cheap-m', 1, 200, { lineId: 'mgso4', supplierId: 'quarry' }),
     );
     expect(planPacks(asked)).toMatchObject({ packs: { one: 3, m: 2 }, totalMinor: 4200 });
-  });
-});
-
-describe('what cannot be planned', () => {
-  test.each<[string, PackRequest, RegExp]>([
-    ['no offer', request(1, []), /kno3 has no offer/],
-    ['no stock', request(1, [offer('one', 1, 1, { maxPacks: 0 })]), /kno3 has no offer/],
-    ['too little stock', request(5, [offer('one', 1, 1, { maxPacks: 4 })]), /5000 g.*4000 g/],
-    [
-      'a minimum out of reach',
-      request(1, [offer('one', 1, 1, { maxPacks: 4 })], [supplier({ minimumOrderMinor: 99 })]),
-      /minimum orders/,
-    ],
-  ])('%s', (_, asked, reason) => {
-    const made = planPacks(asked);
-    expect(made.reason).toMatch(reason);
-    expect({ ...made, reason: '' }).toEqual({
-      feasible: false,
-      exact: true,
-      reason: '',
-      packs: {},
-      goodsMinor: 0,
-      shippingMinor: 0,
-      shippingBySupplier: {},
-      totalMinor: 0,
-      leftOverMg: {},
-    });
-  });
-});
-
-describe('planPacks refuses', () => {
-  const steps = (...upTo: (number | null)[]): Shipping => ({
-    kind: 'byMass',
-    steps: upTo.map((most) => ({ upTo: most, minor: 1 })),
-  });
-  const good = [offer('one', 1, 500)];
-  const terms = (over: Partial<PackSupplier>) => request(1, good, [supplier(over)]);
-  const one = (over: Partial<PackOffer>) => request(1, [offer('one', 1, 500, over)]);
-
-  test.each<[string, PackRequest, RegExp]>([
-    ['a need below zero', request(-1, good), /neededMg/],
-    ['half a milligram', request(0.5 / kg, good), /neededMg/],
-    ['an empty pack', one({ packMg: 0 }), /packMg/],
-    ['a price below zero', one({ priceMinor: -1 }), /priceMinor/],
-    ['half a pack', one({ maxPacks: 0.5 }), /maxPacks/],
-    ['a multiple of zero', one({ multipleOf: 0 }), /multipleOf/],
-    ['an unknown line', one({ lineId: 'x' }), /lineId/],
-    ['an unknown supplier', one({ supplierId: 'x' }), /supplierId/],
-    ['an offer twice', request(1, [...good, ...good]), /one/],
-    ['steps that fall', terms({ shipping: steps(5, 4) }), /upTo/],
-    ['steps that stand still', terms({ shipping: steps(5, 5) }), /upTo/],
-    ['steps after the open one', terms({ shipping: steps(null, 5) }), /upTo/],
-    ['two open steps', terms({ shipping: steps(null, null) }), /upTo/],
-    ['a minimum below zero', terms({ minimumOrderMinor: -1 }), /minimumOrderMinor/],
-    ['free from nonsense', terms({ freeShippingFromMinor: NaN }), /freeShippingFromMinor/],
-    ['shipping below zero', terms({ shipping: { kind: 'flat', minor: -1 } }), /shipping/],
-    [
-      'a total past the safe integers',
-      request(2, [offer('one', 1, Number.MAX_SAFE_INTEGER)]),
-      /goodsMinor|safe/,
-    ],
-  ])('%s', (_, asked, field) => {
-    expect(() => planPacks(asked)).toThrow(RangeError);
-    expect(() => planPacks(asked)).toThrow(field);
-  });
-
-  test.each([-1, NaN, Infinity])('a budget of %d', (budget) => {
-    expect(() => planPacks(request(1, good), budget)).toThrow(/budgetMs/);
   });
 });
