@@ -1,4 +1,4 @@
-import type { Bag, Portion, SplitLine, SplitSheet } from '#shared/schemas/splits.ts';
+import type { Bag, Portion, SplitChange, SplitLine, SplitSheet } from '#shared/schemas/splits.ts';
 
 /** A bag of 25 kg net, weighed, of line `a`. */
 export const bagWith = (changes: Partial<Bag> = {}): Bag => ({
@@ -91,3 +91,12 @@ export const sheetWith = (changes: Partial<SplitSheet> = {}): SplitSheet => ({
   portions: [portionWith()],
   ...changes,
 });
+
+/** What an act replies that changed nothing that matters here. */
+export const noChange: SplitChange = {
+  buyId: 'buy',
+  splitVersion: 8,
+  bags: [],
+  portions: [],
+  partly: false,
+};

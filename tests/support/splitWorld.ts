@@ -81,7 +81,6 @@ export async function billAll(world: LockedWorld, moreMinor = 0): Promise<void> 
                 amountMinor: order.shippingMinor,
                 taxRatePpm: 190_000,
                 basis: 'mass',
-                lineIds: null,
                 chargeId: null,
               },
             ],

@@ -104,6 +104,8 @@ export async function computeFinal(buyId: string, tx?: Tx): Promise<ComputedFina
     tx,
   );
   const clubTakesExcess = choice?.takes ?? false;
+  // What is still in an open bag is not lost.
+  const allClosed = bags.every(({ missing, closed_at }) => missing || closed_at !== null);
   const given = {
     terms,
     charged: await chargedShares(buyId, portions, tx),
@@ -111,7 +113,7 @@ export async function computeFinal(buyId: string, tx?: Tx): Promise<ComputedFina
     costs: costs.received,
     lost: costs.lost,
   };
-  const share = finalShareOf({ ...given, clubTakesExcess });
+  const share = finalShareOf({ ...given, clubTakesExcess: clubTakesExcess && allClosed });
   const lineNotes = new Map(notes.map(({ id, note }) => [id, note]));
   const blocked = whatIsOpen(portions, bags, terms, reconciled, lineNotes);
   if (!costs.ready) blocked.push(costs.reason ?? 'A bill is missing.');
@@ -121,7 +123,7 @@ export async function computeFinal(buyId: string, tx?: Tx): Promise<ComputedFina
     portions,
     reconciled,
     share,
-    possibleExcess: finalShareOf({ ...given, clubTakesExcess: true }).excess,
+    possibleExcess: finalShareOf({ ...given, clubTakesExcess: allClosed }).excess,
     clubTakesExcess,
     names: costs.names,
     blocked,

@@ -4,6 +4,7 @@ import type { BuyActor } from '../actors.ts';
 import { wrongState } from '../problem.ts';
 import { findSnapshot } from './computeTargets.ts';
 import { computeFinal } from './computeFinal.ts';
+import { sayShare } from './tellFinal.ts';
 
 /** What the final share would be now, member by member, beside what was asked for at the lock. */
 export async function previewFinal(actor: BuyActor): Promise<FinalPreview> {
@@ -22,6 +23,7 @@ export async function previewFinal(actor: BuyActor): Promise<FinalPreview> {
     { buyId, clubId: actor.club.id },
   );
   const names = new Map(computed.terms.lines.map(({ id, salt }) => [id, salt.name]));
+  const labels = new Map([...Object.entries(computed.names), ...names]);
   const finals = new Map(computed.share.members.map((each) => [each.memberId, each.finalMinor]));
   const taken = new Set(computed.share.excess.map(({ lineId }) => lineId));
   return {
@@ -53,7 +55,7 @@ export async function previewFinal(actor: BuyActor): Promise<FinalPreview> {
               costMinor: own?.costMinor ?? 0,
             };
           }),
-          why: sheet?.why ?? [],
+          why: sheet ? sayShare(sheet, labels).map((row) => row.join(': ')) : [],
         },
       ];
     }),

@@ -4,9 +4,9 @@ import { beforeEach, describe, expect, it, vi } from 'vitest';
 import BagTable from 'src/components/splits/BagTable.vue';
 import { ApiProblem } from 'src/api/problem.ts';
 import type { SplitActs } from 'src/stores/splitActs.ts';
-import { bagWith, lineWith } from '#tests/support/splitSheets.ts';
+import { bagWith, lineWith, noChange } from '#tests/support/splitSheets.ts';
 
-const countBag = vi.fn();
+const countBag = vi.fn<SplitActs['countBag']>();
 const empty = { grossMg: null, tareMg: null, tareAssumed: true, netMg: null, lot: '' };
 
 function open() {
@@ -29,7 +29,7 @@ function open() {
 
 beforeEach(() => {
   setActivePinia(createPinia());
-  countBag.mockReset().mockResolvedValue(undefined);
+  countBag.mockReset().mockResolvedValue(noChange);
 });
 
 describe('BagTable', () => {

@@ -5,10 +5,10 @@ import type { SplitActs } from 'src/stores/splitActs.ts';
 import WeighPanel from 'src/components/splits/WeighPanel.vue';
 import { useStation } from 'src/components/splits/useStation.ts';
 import { ApiProblem } from 'src/api/problem.ts';
-import { lineWith, portionWith, sheetWith } from '#tests/support/splitSheets.ts';
+import { lineWith, noChange, portionWith, sheetWith } from '#tests/support/splitSheets.ts';
 
-const weigh = vi.fn();
-const claim = vi.fn(() => Promise.resolve());
+const weigh = vi.fn<SplitActs['weigh']>();
+const claim = vi.fn<SplitActs['claim']>(() => Promise.resolve(noChange));
 
 function open(changes: Parameters<typeof portionWith>[0] = {}) {
   const portion = portionWith(changes);
@@ -29,7 +29,7 @@ const keep = () => screen.getByRole<HTMLButtonElement>('button', { name: /Keep|l
 
 beforeEach(() => {
   setActivePinia(createPinia());
-  weigh.mockReset().mockResolvedValue(undefined);
+  weigh.mockReset().mockResolvedValue(noChange);
   claim.mockClear();
   useStation().value = { name: 'Table 1', scale: 'Blue', divisionMg: 100, capacityMg: 2_000_000 };
 });
