@@ -20,13 +20,8 @@ import {
   restoreCharge,
 } from '../services/buys/changeCharges.ts';
 import { changeHead } from '../services/buys/changeHead.ts';
-import {
-  addLine,
-  changeLine,
-  orderLines,
-  removeLine,
-  restoreLine,
-} from '../services/buys/changeLines.ts';
+import { addLine, changeLine } from '../services/buys/changeLines.ts';
+import { orderLines, removeLine, restoreLine } from '../services/buys/removeLine.ts';
 import { listLineChoices, readTerms } from '../services/buys/readTerms.ts';
 
 const allow = canOrganiseBuy;
