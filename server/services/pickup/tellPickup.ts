@@ -109,7 +109,7 @@ export async function tellReceipt(
   const hazards = [
     ...new Set(
       portions.flatMap(({ salt, signalWord, hazards: own }) =>
-        own.length > 0 ? [`${salt}: ${signalWord ? `${signalWord}. ` : ''}${own.join('. ')}.`] : [],
+        own.length > 0 ? [`${salt}: ${signalWord ? `${signalWord}. ` : ''}${own.join(' ')}`] : [],
       ),
     ),
   ];

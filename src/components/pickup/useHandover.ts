@@ -40,14 +40,14 @@ export function useHandover(
     if (collector.value === 'proxy') return props.person.proxyName ?? '';
     return collector.value === 'other' ? otherName.value.trim() : '';
   });
-  const ready = computed(
-    () =>
-      chosen.value.length > 0 &&
-      !owes.value &&
-      papers.value.length === 0 &&
-      (collector.value !== 'other' || otherName.value.trim() !== '') &&
-      (!asksLegalName.value || legalName.value.trim() !== ''),
-  );
+  /** What is still missing before it can be handed over; empty when nothing is. */
+  const missing = computed(() => {
+    if (owes.value) return 'First the payment, or somebody’s word for it.';
+    if (chosen.value.length === 0) return 'Tick what you hand over.';
+    if (papers.value.length > 0) return 'First the signed paper.';
+    if (collector.value === 'other' && !otherName.value.trim()) return 'Write who collects.';
+    return asksLegalName.value && !legalName.value.trim() ? 'Ask for the legal name.' : '';
+  });
 
   const form = useApiForm(
     () =>
@@ -117,7 +117,7 @@ export function useHandover(
     recorded,
     asksLegalName,
     owes,
-    ready,
+    missing,
     undo,
     handOver,
     pending: form.pending,
