@@ -106,6 +106,11 @@ export function useSectionForm<Fields extends object>(choices: Choices<Fields>) 
     if (choices.auto()) void save().then(() => (undoable.value = null));
   }
 
+  /** Goes back to the fields without saving what was asked about. */
+  const forget = () => {
+    effect.value = null;
+  };
+
   /** Drops what isn't saved. */
   function reset() {
     Object.assign(form, base.value);
@@ -129,6 +134,7 @@ export function useSectionForm<Fields extends object>(choices: Choices<Fields>) 
     auto: computed(() => choices.auto()),
     save,
     ask,
+    forget,
     commit,
     undo,
     reset,
