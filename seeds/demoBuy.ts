@@ -1,7 +1,6 @@
 import { randomUUID } from 'node:crypto';
-import { select } from '#server/config/database.ts';
+import { execute, select, transact } from '#server/config/database.ts';
 import { Buy } from '#server/models/Buy.ts';
-import { Membership } from '#server/models/Membership.ts';
 import type { BuyActor } from '#server/services/actors.ts';
 import { addCharge } from '#server/services/buys/changeCharges.ts';
 import { changeHead } from '#server/services/buys/changeHead.ts';
@@ -35,6 +34,9 @@ import type { DemoLine } from './data/buys.ts';
 import type { DemoClub } from './demoClub.ts';
 
 const gram = 1000;
+
+/** Tax at 19 % that an amount contains, in minor units. */
+const taxIn = (minor: number) => Math.round((minor * 19) / 119);
 
 /** A demo buy, moved on by the services that people use, step by step. */
 export class DemoBuy {
@@ -160,6 +162,10 @@ export class DemoBuy {
       });
     }
     for (const order of (await loadOrderBook(this.id)).orders) {
+      const goodsMinor = order.packs.reduce(
+        (sum, { packs, priceMinor }) => sum + packs * priceMinor,
+        0,
+      );
       const { id } = await enterBill(await this.own(), {
         version: 0,
         supplierId: order.supplierId,
@@ -185,7 +191,7 @@ export class DemoBuy {
                   chargeId: null,
                 },
               ],
-        taxMinor: 0,
+        taxMinor: taxIn(goodsMinor + order.shippingMinor),
         paidBy: 'club',
         advancedById: null,
       });
@@ -217,7 +223,7 @@ export class DemoBuy {
           chargeId: charge?.id ?? null,
         },
       ],
-      taxMinor: 182,
+      taxMinor: taxIn(1140),
       paidBy: 'member',
       advancedById: own.membershipId,
     });
@@ -301,8 +307,17 @@ export class DemoBuy {
     await finishSplitting(await this.own(), { termsVersion: await this.termsVersion(), basis });
   }
 
-  async names(): Promise<Map<string, string>> {
-    const members = await Membership.findAll({ where: { clubId: (await this.own()).club.id } });
-    return new Map(members.map(({ id, displayName }) => [id, displayName]));
+  /** Puts the buy so many days into the past. What is in the books keeps its day: nothing there is ever changed. */
+  async backdate(days: number): Promise<void> {
+    const past = (column: string) => `${column} = ${column} - make_interval(days => :days)`;
+    const times = ['opened', 'locked', 'ordered', 'arrived', 'splitting', 'pickup', 'settled']
+      .map((step) => `${step}_at`)
+      .concat('closes_at', 'splits_at', 'split_ends_at', 'due_at', 'created_at');
+    await transact(async (tx) => {
+      const values = { days, buyId: this.id };
+      await execute(`update buys set ${times.map(past).join(', ')} where id = :buyId`, values, tx);
+      await execute(`update terms_changes set ${past('at')} where buy_id = :buyId`, values, tx);
+      await execute(`update notices set ${past('created_at')} where buy_id = :buyId`, values, tx);
+    });
   }
 }

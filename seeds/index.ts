@@ -88,6 +88,7 @@ async function makeSettled(club: DemoClub): Promise<void> {
   }
   const { termsVersion } = await Buy.findByPk(buy.id, { rejectOnEmpty: true });
   await settleBuy(await club.buyActor(parts.treasurer, buy.id), termsVersion);
+  await buy.backdate(130);
 }
 
 /** A buy at the split: half of it is weighed, one member has not paid. */
