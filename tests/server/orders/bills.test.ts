@@ -1,77 +1,11 @@
 import { randomUUID } from 'node:crypto';
 import { beforeEach, describe, expect, it } from 'vitest';
-import { shareRequestOf } from '#shared/domain/buys/requests.ts';
-import { shareOut } from '#shared/domain/shares/shareOut.ts';
-import { execute, transact } from '#server/config/database.ts';
-import { systemActor } from '#server/services/actorName.ts';
 import { buyAccountBalance } from '#server/services/ledger/balances.ts';
-import { postTransaction } from '#server/services/ledger/postTransaction.ts';
-import { loadPledges, loadSheetTerms } from '#server/services/buys/loadSheetTerms.ts';
 import { costsOfBuy } from '#server/services/orders/costsOfBuy.ts';
 import type { BillsReply, OrdersReply, SettlingReply } from '#shared/schemas/orders.ts';
 import { accountSum, booksOf, makeLockedWorld, type LockedWorld } from '#tests/support/locked.ts';
+import { pay, place, postFinal, today } from '#tests/support/ordering.ts';
 import type { Agent } from '#tests/support/client.ts';
-
-const today = () => new Date().toISOString().slice(0, 10);
-
-/** Posts a final share as the split does: each member, the shelf, and the buy's account against them. */
-async function postFinal(world: LockedWorld): Promise<void> {
-  const costs = await costsOfBuy(world.buy.id);
-  expect(costs.ready).toBe(true);
-  const request = shareRequestOf(
-    await loadSheetTerms(world.buy.id),
-    await loadPledges(world.buy.id),
-    costs.received,
-    'final',
-  );
-  const sheet = shareOut(request);
-  const lost = new Map(costs.lost.map(({ memberId, minor }) => [memberId, minor]));
-  await transact(async (tx) => {
-    const finals = sheet.members.map(({ memberId, totalMinor }) => ({
-      memberId,
-      minor: totalMinor + (lost.get(memberId) ?? 0),
-    }));
-    await postTransaction(tx, {
-      clubId: world.club.id,
-      eventType: 'final_share',
-      eventId: world.buy.id,
-      onDate: today(),
-      memo: 'Final shares',
-      buyId: world.buy.id,
-      by: systemActor('test'),
-      postings: [
-        ...finals.map(({ memberId, minor }) => ({
-          account: { kind: 'member' as const, refId: memberId },
-          amountMinor: minor,
-        })),
-        { account: { kind: 'shelf' as const }, amountMinor: sheet.shelf.totalMinor },
-        {
-          account: { kind: 'buy' as const, refId: world.buy.id },
-          amountMinor: 0 - costs.totalMinor,
-        },
-      ],
-    });
-    for (const { memberId, minor } of finals) {
-      await execute(
-        'update buy_members set final_minor = :minor where buy_id = :buyId and membership_id = :memberId',
-        { minor, memberId, buyId: world.buy.id },
-        tx,
-      );
-    }
-    await execute(
-      `insert into snapshots (buy_id, kind, terms_version, request, sheet, extra)
-       values (:buyId, 'final', 1, :request, :sheet, :extra)`,
-      {
-        buyId: world.buy.id,
-        request: JSON.stringify(request),
-        sheet: JSON.stringify(sheet),
-        extra: JSON.stringify({ lost: costs.lost, excess: [], names: costs.names }),
-      },
-      tx,
-    );
-    await execute("update buys set state = 'pickup' where id = :id", { id: world.buy.id }, tx);
-  });
-}
 
 describe('bills', () => {
   let world: LockedWorld;
@@ -84,34 +18,8 @@ describe('bills', () => {
     own = await world.people.own.agent();
     treasurer = await world.people.treasurer.agent();
     url = `/api/v1/clubs/${world.club.slug}/buys/${world.buy.id}`;
-    for (const person of world.payers) {
-      await treasurer
-        .post(`/api/v1/clubs/${world.club.slug}/payments`)
-        .send({
-          key: randomUUID(),
-          memberId: person.membership.id,
-          buyId: world.buy.id,
-          method: 'transfer',
-          amountMinor: world.dueOf(person),
-          receivedOn: today(),
-          reference: '',
-        })
-        .expect(201);
-    }
-    for (const supplierId of Object.values(world.suppliers)) {
-      const now: OrdersReply = (await own.get(`${url}/orders`)).body;
-      const order = now.orders.find((each) => each.supplierId === supplierId);
-      await own
-        .post(`${url}/orders/${supplierId}/place`)
-        .send({
-          version: order?.version,
-          termsVersion: now.termsVersion,
-          placedOn: today(),
-          reference: '',
-          note: '',
-        })
-        .expect(200);
-    }
+    for (const person of world.payers) await pay(world, person);
+    for (const supplierId of Object.values(world.suppliers)) await place(world, supplierId);
   });
 
   const saltsBill = (fields: object = {}) => ({

@@ -2,70 +2,9 @@ import { randomUUID } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
 import { execute, select, transact } from '#server/config/database.ts';
 import type { LockedReply, OrdersReply, QuoteEffect } from '#shared/schemas/orders.ts';
-import { makeLockedWorld, type LockedWorld } from '#tests/support/locked.ts';
+import { makeLockedWorld } from '#tests/support/locked.ts';
+import { base, orders, pay, place, quote } from '#tests/support/ordering.ts';
 import type { Person } from '#tests/support/world.ts';
-
-const today = () => new Date().toISOString().slice(0, 10);
-const base = (world: LockedWorld) => `/api/v1/clubs/${world.club.slug}/buys/${world.buy.id}`;
-
-async function pay(world: LockedWorld, person: Person, amountMinor = world.dueOf(person)) {
-  const treasurer = await world.people.treasurer.agent();
-  await treasurer
-    .post(`/api/v1/clubs/${world.club.slug}/payments`)
-    .send({
-      key: randomUUID(),
-      memberId: person.membership.id,
-      buyId: world.buy.id,
-      method: 'transfer',
-      amountMinor,
-      receivedOn: today(),
-      reference: '',
-    })
-    .expect(201);
-}
-
-async function orders(world: LockedWorld): Promise<OrdersReply> {
-  const own = await world.people.own.agent();
-  return (await own.get(`${base(world)}/orders`).expect(200)).body;
-}
-
-async function place(world: LockedWorld, supplierId: string, fields: object = {}) {
-  const own = await world.people.own.agent();
-  const now = await orders(world);
-  const order = now.orders.find((each) => each.supplierId === supplierId);
-  return own.post(`${base(world)}/orders/${supplierId}/place`).send({
-    version: order?.version,
-    termsVersion: now.termsVersion,
-    placedOn: today(),
-    reference: 'Q-118',
-    note: '',
-    ...fields,
-  });
-}
-
-async function quote(
-  world: LockedWorld,
-  supplierId: string,
-  priceMinor: number,
-  shippingMinor?: number,
-) {
-  const own = await world.people.own.agent();
-  const now = await orders(world);
-  const order = now.orders.find((each) => each.supplierId === supplierId);
-  const body = {
-    prices: order?.packs.map(({ offerId }) => ({ offerId, priceMinor })) ?? [],
-    shippingMinor: shippingMinor ?? order?.shippingMinor ?? 0,
-  };
-  return {
-    check: await own.post(`${base(world)}/orders/${supplierId}/check`).send(body),
-    set: () =>
-      own.put(`${base(world)}/orders/${supplierId}/prices`).send({
-        ...body,
-        version: order?.version,
-        termsVersion: now.termsVersion,
-      }),
-  };
-}
 
 describe('the locked buy', () => {
   it('shows dues and payments to those who may know, and to others only their own', async () => {
