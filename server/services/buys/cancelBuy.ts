@@ -7,6 +7,7 @@ import type { BuyActor } from '../actors.ts';
 import { writeAudit } from '../audit/writeAudit.ts';
 import { memberBalancesOfBuy } from '../ledger/balances.ts';
 import { queueNotice } from '../notices/queueNotice.ts';
+import { ordersPlaced } from '../orders/findOrders.ts';
 import { wrongState } from '../problem.ts';
 import { readBuyHeaderAgain } from './readBuys.ts';
 import { sayFor } from './sayTerms.ts';
@@ -152,9 +153,12 @@ export async function cancelBuy(
   body: { termsVersion: number; reason: string },
 ): Promise<BuyHeader> {
   const { termsVersion, reason } = body;
-  await withBuy(actor.buy.id, { states: ['open', 'locked'], termsVersion }, (buy, tx) =>
-    cancelUnderLock(buy, reason, byActor(actor), tx),
-  );
+  await withBuy(actor.buy.id, { states: ['open', 'locked'], termsVersion }, async (buy, tx) => {
+    if (await ordersPlaced(buy.id, tx)) {
+      throw wrongState('An order is placed. Mark each as failed if no supplier can deliver.');
+    }
+    await cancelUnderLock(buy, reason, byActor(actor), tx);
+  });
   return readBuyHeaderAgain(actor, actor.buy.id);
 }
 
