@@ -1,4 +1,5 @@
 import { defineConfig } from '#q-app/wrappers';
+import { inlineIcons } from './vite.icons.ts';
 
 const api = { target: process.env.TAREWELL_DEV_API ?? 'http://127.0.0.1:4681' };
 
@@ -13,7 +14,7 @@ export default defineConfig(() => ({
   framework: {
     iconSet: 'svg-mdi-v7',
     autoImportComponentCase: 'pascal',
-    plugins: ['Dark', 'Dialog', 'Notify'],
+    plugins: ['Dark', 'Notify'],
   },
   build: {
     target: { browser: ['es2022', 'firefox115', 'chrome115', 'safari16'], node: 'node20' },
@@ -21,6 +22,7 @@ export default defineConfig(() => ({
     vueOptionsAPI: false,
     distDir: 'dist/spa',
     typescript: { strict: true, vueShim: false },
+    vitePlugins: [inlineIcons()],
   },
   devServer: {
     host: '127.0.0.1',

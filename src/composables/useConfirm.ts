@@ -1,4 +1,4 @@
-import { Dialog } from 'quasar';
+import { shallowReactive } from 'vue';
 
 export type ConfirmChoices = {
   title: string;
@@ -9,37 +9,41 @@ export type ConfirmChoices = {
   danger?: boolean;
 };
 
-const frame = ({ title, text, act, danger = false }: ConfirmChoices) => ({
-  title,
-  message: text,
-  'aria-label': title,
-  class: 'tw-ask',
-  ok: { label: act, unelevated: true, color: danger ? 'negative' : 'primary' },
-  cancel: { label: 'Cancel', flat: true, color: 'ink' },
-});
+type Prompt = { label: string; value?: string };
+
+/** One question on screen; `answer` counts once, and null is the safe answer. */
+export type Question = ConfirmChoices & {
+  id: number;
+  prompt: Prompt | null;
+  answer: (text: string | null) => void;
+};
+
+let last = 0;
+
+/** What is being asked right now; the app shows a dialog for each. */
+export const questions = shallowReactive<Question[]>([]);
+
+/** Takes a question off the screen; unanswered, it was thought better of. */
+export function closeQuestion(question: Question) {
+  question.answer(null);
+  const place = questions.findIndex(({ id }) => id === question.id);
+  if (place >= 0) questions.splice(place, 1);
+}
+
+const ask = (choices: ConfirmChoices, prompt: Prompt | null) =>
+  new Promise<string | null>((answer) => {
+    last += 1;
+    questions.push({ ...choices, prompt, answer, id: last });
+  });
 
 /** Asks before an act that can't be undone; the safe answer has the focus. */
-export const confirmAct = (choices: ConfirmChoices) =>
-  new Promise<boolean>((resolve) => {
-    Dialog.create({ ...frame(choices), focus: choices.danger ? 'cancel' : 'ok' })
-      .onOk(() => resolve(true))
-      .onCancel(() => resolve(false));
-  });
+export const confirmAct = async (choices: ConfirmChoices): Promise<boolean> =>
+  (await ask(choices, null)) !== null;
 
 /** Asks for a sentence, such as a reason; `null` when the person thinks better of it. */
-export const askText = (choices: ConfirmChoices & { label: string; value?: string }) =>
-  new Promise<string | null>((resolve) => {
-    Dialog.create({
-      ...frame(choices),
-      prompt: {
-        model: choices.value ?? '',
-        label: choices.label,
-        outlined: true,
-        color: 'primary',
-        type: 'textarea',
-        isValid: (text: string) => text.trim().length > 0,
-      },
-    })
-      .onOk((text: string) => resolve(text.trim()))
-      .onCancel(() => resolve(null));
-  });
+export const askText = ({
+  label,
+  value,
+  ...choices
+}: ConfirmChoices & { label: string; value?: string }): Promise<string | null> =>
+  ask(choices, { label, value });
