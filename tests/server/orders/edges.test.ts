@@ -9,21 +9,33 @@ import { base, orders, pay, place, quote } from '#tests/support/ordering.ts';
 const change = (sql: string, values: Record<string, unknown>) =>
   transact((tx) => execute(sql, values, tx));
 
+/** A locked world in which the second supplier is the club's own shelf, with one lot that covers the order. */
+async function makeShelfWorld() {
+  const world = await makeLockedWorld();
+  const shelf = world.suppliers.other;
+  await change(
+    `insert into shelf_stock (club_id, salt_id, lot, mg, cost_minor, price_minor_per_kg, origin)
+     select club_id, salt_id, 'L-1', pack_mg, 700, 1, 'left_over' from offers where supplier_id = :shelf`,
+    { shelf },
+  );
+  await change('update suppliers set is_shelf = true where id = :shelf', { shelf });
+  await change(
+    `update snapshots set terms = jsonb_set(terms, '{suppliers}', (
+       select jsonb_agg(case when s->>'id' = :shelf then s || '{"isShelf": true}' else s end)
+       from jsonb_array_elements(terms->'suppliers') s)) where buy_id = :buyId`,
+    { shelf, buyId: world.buy.id },
+  );
+  for (const person of world.payers) await pay(world, person);
+  return { world, shelf };
+}
+
 describe('an order from the club’s own shelf', () => {
   it('costs what the shelf asks, without a bill, and goes back when it fails', async () => {
-    const world = await makeLockedWorld();
-    const shelf = world.suppliers.other;
-    await change('update suppliers set is_shelf = true where id = :shelf', { shelf });
-    await change(
-      `update snapshots set terms = jsonb_set(terms, '{suppliers}', (
-         select jsonb_agg(case when s->>'id' = :shelf then s || '{"isShelf": true}' else s end)
-         from jsonb_array_elements(terms->'suppliers') s)) where buy_id = :buyId`,
-      { shelf, buyId: world.buy.id },
-    );
-    for (const person of world.payers) await pay(world, person);
+    const { world, shelf } = await makeShelfWorld();
     expect((await place(world, shelf)).status).toBe(200);
     expect(await buyAccountBalance(world.buy.id)).toBe(1840);
-    expect(await accountSum(world.club.id, 'shelf')).toBe(-1840);
+    expect(await accountSum(world.club.id, 'shelf')).toBe(-700);
+    expect(await accountSum(world.club.id, 'losses')).toBe(-1140);
     await place(world, world.suppliers.salts);
     const costs = await costsOfBuy(world.buy.id);
     expect(costs.reason).toContain('Grainmoor Salts');
@@ -36,6 +48,36 @@ describe('an order from the club’s own shelf', () => {
       .expect(200);
     expect(await buyAccountBalance(world.buy.id)).toBe(0);
     expect(await accountSum(world.club.id, 'shelf')).toBe(0);
+    expect(await accountSum(world.club.id, 'losses')).toBe(0);
+  });
+
+  it('comes as one bag for each lot, and is refused when the lot was sold meanwhile', async () => {
+    const { world, shelf } = await makeShelfWorld();
+    await change('update shelf_stock set mg = mg - 1 where club_id = :clubId', {
+      clubId: world.club.id,
+    });
+    const refused = await place(world, shelf);
+    expect(refused.status).toBe(409);
+    expect(refused.body.detail).toContain('The shelf has only');
+    await change('update shelf_stock set mg = mg + 1 where club_id = :clubId', {
+      clubId: world.club.id,
+    });
+    expect((await place(world, shelf)).status).toBe(200);
+    const own = await world.people.own.agent();
+    const order = (await orders(world)).orders.find(({ supplierId }) => supplierId === shelf);
+    await own
+      .post(`${base(world)}/orders/${shelf}/arrival`)
+      .send({
+        version: order?.version,
+        packs: order?.packs.map(({ offerId, packs }) => ({ offerId, packs })),
+        note: '',
+      })
+      .expect(200);
+    const bags = await select<{ lot: string; mg: number }>(
+      'select lot, nominal_mg as mg from bags where buy_id = :id',
+      { id: world.buy.id },
+    );
+    expect(bags).toEqual([{ lot: 'L-1', mg: 5_000_000 }]);
   });
 });
 
@@ -71,6 +113,25 @@ describe('a quote', () => {
     const again = await quote(world, world.suppliers.salts, 9900);
     expect(again.check.status).toBe(409);
     expect((await again.set()).body.code).toBe('wrong_state');
+  });
+});
+
+describe('a buy whose order is out', () => {
+  it('can neither be cancelled nor opened again', async () => {
+    const world = await makeLockedWorld();
+    for (const person of world.payers) await pay(world, person);
+    await place(world, world.suppliers.salts);
+    const own = await world.people.own.agent();
+    const { termsVersion } = await orders(world);
+    const cancel = await own
+      .post(`${base(world)}/cancel`)
+      .send({ termsVersion, reason: 'Second thoughts' });
+    expect(cancel.body.code).toBe('wrong_state');
+    const closesAt = new Date(Date.now() + 86_400_000).toISOString();
+    const reopen = await own
+      .post(`${base(world)}/reopen`)
+      .send({ termsVersion, reason: 'Second thoughts', closesAt });
+    expect(reopen.body.code).toBe('wrong_state');
   });
 });
 
