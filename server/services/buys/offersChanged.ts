@@ -12,6 +12,8 @@ export interface OfferChanged {
   readonly supplierId: string;
   readonly offerId: string | null;
   readonly summary: string;
+  /** Only what is in stock moved: the plan follows, and nobody is written to. */
+  readonly quiet?: boolean;
 }
 
 interface Touched {
@@ -75,10 +77,15 @@ async function tellBuy(
 ): Promise<void> {
   const buy = await Buy.lock(buyId, tx);
   if (buy.state !== 'open') return;
-  const said = changes.slice(0, sentences).map(({ summary }) => summary);
-  const more = changes.length - said.length;
+  const loud = changes.filter(({ quiet }) => !quiet);
+  const shown = loud.length > 0 ? loud : changes;
+  const said = shown.slice(0, sentences).map(({ summary }) => summary);
+  const more = shown.length - said.length;
   if (more > 0) said.push(`${more} more ${more === 1 ? 'change' : 'changes'} of offers.`);
-  await changeTerms(buy, said.join(' '), by, tx, { offers: changes.map((one) => ({ ...one })) });
+  await changeTerms(buy, said.join(' '), by, tx, {
+    offers: changes.map((one) => ({ ...one })),
+    ...(loud.length > 0 ? {} : { quiet: true }),
+  });
   await writeAudit(tx, {
     clubId: buy.clubId,
     buyId,
@@ -87,6 +94,16 @@ async function tellBuy(
     subject: { type: 'buy', id: buyId },
     after: { changes: changes.map(({ summary }) => summary) },
   });
+  if (loud.length > 0) await writeNotice(tx, buy, clubSlug, said);
+  const { sheetVersion } = buy;
+  tx.afterCommit(() => {
+    publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion });
+    requestPlan(buyId);
+  });
+}
+
+async function writeNotice(tx: Tx, buy: Buy, clubSlug: string, said: readonly string[]) {
+  const buyId = buy.id;
   await queueNotice(tx, {
     clubId: buy.clubId,
     buyId,
@@ -101,10 +118,5 @@ async function tellBuy(
       ],
       action: { label: 'Open the buy', path: `/c/${clubSlug}/buys/${buyId}` },
     },
-  });
-  const { sheetVersion } = buy;
-  tx.afterCommit(() => {
-    publishToBuy(buyId, 'buy:changed', { kind: 'terms', buyId, sheetVersion });
-    requestPlan(buyId);
   });
 }

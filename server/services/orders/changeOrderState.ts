@@ -48,7 +48,7 @@ export async function changeOrderState(
   const { note } = change;
   await saveOrder(buy.id, order, { state: change.state, ...(note ? { note } : {}) }, tx);
   if (change.state === 'failed' && orderFacts(book.terms, order).isShelf) {
-    await returnShelfOrder(buy, order, note || 'The shelf could not deliver.', by, tx);
+    await returnShelfOrder(buy, club, order, note || 'The shelf could not deliver.', by, tx);
   }
   await writeAudit(tx, {
     clubId: buy.clubId,

@@ -65,7 +65,7 @@ export async function placeOrder(
       tx,
     );
     if (orderFacts(book.terms, order).isShelf) {
-      await postShelfOrder(buy, order, body.placedOn, by, tx);
+      await postShelfOrder(buy, actor.club, order, body.placedOn, by, tx);
     }
     await writeAudit(tx, {
       clubId: buy.clubId,

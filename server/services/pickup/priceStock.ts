@@ -6,6 +6,7 @@ import { byActor } from '../buys/withBuy.ts';
 import { stale } from '../problem.ts';
 import { readShelf } from './readShelf.ts';
 import { lockedStock } from './shelfStock.ts';
+import { syncShelfSupplier } from './syncShelfSupplier.ts';
 
 /** Sets what a kilogram of a lot costs; null: not for sale. */
 export async function priceStock(
@@ -30,6 +31,7 @@ export async function priceStock(
       before: { priceMinorPerKg: stock.price_minor_per_kg },
       after: { priceMinorPerKg: body.priceMinorPerKg },
     });
+    await syncShelfSupplier(actor.club, byActor(actor), tx);
     return readShelf(actor, tx);
   });
 }

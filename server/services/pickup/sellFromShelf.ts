@@ -10,8 +10,10 @@ import { postTransaction, type Posting } from '../ledger/postTransaction.ts';
 import { invalid, wrongState } from '../problem.ts';
 import { saltsByIds } from '../salts/saltsOfClub.ts';
 import { readShelf } from './readShelf.ts';
+import { resalePostings } from './resalePostings.ts';
 import { writeSaleRecord } from './saleRecords.ts';
 import { lockedStock, requireSeller, type StockRow } from './shelfStock.ts';
+import { syncShelfSupplier } from './syncShelfSupplier.ts';
 
 async function requireBuyer(stock: StockRow, body: SaleBody, actor: ClubActor, tx: Tx) {
   const [buyer] = await select<{
@@ -64,26 +66,7 @@ function postings(
     account: { kind: 'member', refId: body.membershipId },
     amountMinor: priceMinor,
   };
-  if (stock.owed_to_id) {
-    // It was paid for once already: whoever did not collect it gets what it fetched, at most what it cost them.
-    const back = Math.min(priceMinor, costMinor);
-    return {
-      costMinor,
-      list: [
-        buyer,
-        { account: { kind: 'member', refId: stock.owed_to_id }, amountMinor: 0 - back },
-        { account: { kind: 'losses' }, amountMinor: back - priceMinor },
-      ],
-    };
-  }
-  return {
-    costMinor,
-    list: [
-      buyer,
-      { account: { kind: 'shelf' }, amountMinor: 0 - costMinor },
-      { account: { kind: 'losses' }, amountMinor: costMinor - priceMinor },
-    ],
-  };
+  return { costMinor, list: [buyer, ...resalePostings(stock.owed_to_id, priceMinor, costMinor)] };
 }
 
 /**
@@ -155,6 +138,7 @@ export async function sellFromShelf(
       subject: { type: 'shelf_stock', id: stockId },
       after: { to: name, mg: body.mg, private: { priceMinor } },
     });
+    await syncShelfSupplier(actor.club, byActor(actor), tx);
     return readShelf(actor, tx);
   });
 }

@@ -9,6 +9,7 @@ import { DomainProblem, notFound } from '../problem.ts';
 import { readShelf } from './readShelf.ts';
 import { eraseSaleRecord } from './saleRecords.ts';
 import { lockedStock, requireSeller } from './shelfStock.ts';
+import { syncShelfSupplier } from './syncShelfSupplier.ts';
 
 /** Takes a sale back: the grams lie on the shelf again, the books are reversed. */
 export async function undoSale(actor: ClubActor, saleId: string): Promise<Shelf> {
@@ -63,6 +64,7 @@ export async function undoSale(actor: ClubActor, saleId: string): Promise<Shelf>
       subject: { type: 'shelf_sale', id: saleId },
       before: { mg: sale.mg },
     });
+    await syncShelfSupplier(actor.club, byActor(actor), tx);
     return readShelf(actor, tx);
   });
 }

@@ -1,8 +1,10 @@
 import { select, type Tx } from '../../config/database.ts';
 import type { OrderPack } from '#shared/domain/orders/orderTypes.ts';
+import { lotsOfOrder } from '../pickup/shelfDraws.ts';
 
 /**
- * One row for each pack of an order: those that came, those that are missing, and those beyond what was ordered.
+ * One row for each pack of an order: those that came, those that are missing, and those beyond what was ordered. What was
+ * taken from the shelf is one bag for each lot.
  * Numbers go on from the line's last bag.
  * @returns ids of the new bags
  */
@@ -22,8 +24,22 @@ export async function createBags(
     ).map((row) => [row.line_id, row.number]),
   );
   const ids: string[] = [];
+  const lots = await lotsOfOrder(buyId, order.id, tx);
   for (const { offerId, lineId, packs, packMg } of order.packs) {
     const came = received.get(offerId) ?? packs;
+    const taken = came === packs ? lots.get(offerId) : undefined;
+    for (const { mg, lot } of taken ?? []) {
+      const number = (last.get(lineId) ?? 0) + 1;
+      last.set(lineId, number);
+      const [bag] = await select<{ id: string }>(
+        `insert into bags (buy_id, line_id, supplier_order_id, offer_id, number, nominal_mg, lot)
+         values (:buyId, :lineId, :orderId, :offerId, :number, :mg, :lot) returning id`,
+        { buyId, lineId, orderId: order.id, offerId, number, mg, lot },
+        tx,
+      );
+      if (bag) ids.push(bag.id);
+    }
+    if (taken) continue;
     for (let index = 0; index < Math.max(packs, came); index += 1) {
       const number = (last.get(lineId) ?? 0) + 1;
       last.set(lineId, number);
