@@ -1,4 +1,4 @@
-import { shallowReactive } from 'vue';
+import { markRaw, shallowReactive, type Component } from 'vue';
 
 export type ConfirmChoices = {
   title: string;
@@ -9,12 +9,14 @@ export type ConfirmChoices = {
   danger?: boolean;
 };
 
-type Prompt = { label: string; value?: string };
+export type Prompt = { label: string; value?: string };
 
 /** One question on screen; `answer` counts once, and null is the safe answer. */
-export type Question = ConfirmChoices & {
+export type Question = {
   id: number;
-  prompt: Prompt | null;
+  /** The dialog that asks it; null: the usual one. */
+  dialog: Component | null;
+  props: Record<string, unknown>;
   answer: (text: string | null) => void;
 };
 
@@ -30,15 +32,15 @@ export function closeQuestion(question: Question) {
   if (place >= 0) questions.splice(place, 1);
 }
 
-const ask = (choices: ConfirmChoices, prompt: Prompt | null) =>
+const ask = (dialog: Component | null, props: Record<string, unknown>) =>
   new Promise<string | null>((answer) => {
     last += 1;
-    questions.push({ ...choices, prompt, answer, id: last });
+    questions.push({ dialog, props, answer, id: last });
   });
 
 /** Asks before an act that can't be undone; the safe answer has the focus. */
 export const confirmAct = async (choices: ConfirmChoices): Promise<boolean> =>
-  (await ask(choices, null)) !== null;
+  (await ask(null, { choices })) !== null;
 
 /** Asks for a sentence, such as a reason; `null` when the person thinks better of it. */
 export const askText = ({
@@ -46,4 +48,10 @@ export const askText = ({
   value,
   ...choices
 }: ConfirmChoices & { label: string; value?: string }): Promise<string | null> =>
-  ask(choices, { label, value });
+  ask(null, { choices, prompt: { label, value } });
+
+/** Asks with a dialog of its own, which gets the question beside its props; true once it was answered. */
+export const confirmWith = async (
+  dialog: Component,
+  props: Record<string, unknown>,
+): Promise<boolean> => (await ask(markRaw(dialog), props)) !== null;

@@ -1,6 +1,6 @@
 import type { SheetLine } from '#shared/domain/buys/sheetTerms.ts';
 import { mostOf, plainWish } from '#shared/domain/buys/pledgeRules.ts';
-import { Dialog } from 'quasar';
+import { confirmWith } from 'src/composables/useConfirm.ts';
 import { notifyDone } from 'src/composables/useNotify.ts';
 import { useSheetStore } from 'src/stores/sheet.ts';
 import { cellKey, type Wish } from 'src/stores/sheetRows.ts';
@@ -8,11 +8,7 @@ import { cellKey, type Wish } from 'src/stores/sheetRows.ts';
 /** Asks once for a classified salt whether its cautions are read; true when they are. */
 async function confirmCautions(line: SheetLine): Promise<boolean> {
   const { default: HazardDialog } = await import('src/components/sheet/HazardDialog.vue');
-  return new Promise((resolve) => {
-    Dialog.create({ component: HazardDialog, componentProps: { line } })
-      .onOk(() => resolve(true))
-      .onCancel(() => resolve(false));
-  });
+  return confirmWith(HazardDialog, { line });
 }
 
 /** Changing pledges from cells, steppers and dialogs: cautions first, then save, with a way back. */

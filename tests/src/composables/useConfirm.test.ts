@@ -1,7 +1,15 @@
 import { fireEvent, render, screen, waitFor } from '@testing-library/vue';
 import { afterEach, beforeAll, describe, expect, it } from 'vitest';
 import App from 'src/App.vue';
-import { askText, closeQuestion, confirmAct, questions } from 'src/composables/useConfirm.ts';
+import { defineComponent, h, type PropType } from 'vue';
+import {
+  askText,
+  closeQuestion,
+  confirmAct,
+  confirmWith,
+  questions,
+  type Question,
+} from 'src/composables/useConfirm.ts';
 
 const choices = {
   title: 'Remove Noor Valdane?',
@@ -63,5 +71,23 @@ describe('askText', () => {
     expect(field.value).toBe('Moved away');
     await fireEvent.click(await button('Cancel'));
     expect(await answer).toBeNull();
+  });
+});
+
+describe('confirmWith', () => {
+  const Cautions = defineComponent({
+    props: {
+      question: { type: Object as PropType<Question>, required: true },
+      salt: { type: String, required: true },
+    },
+    setup: (props) => () =>
+      h('button', { onClick: () => props.question.answer('read') }, `Read about ${props.salt}`),
+  });
+
+  it('shows the dialog it is given, and holds until that has answered', async () => {
+    show();
+    const agreed = confirmWith(Cautions, { salt: 'Potassium nitrate' });
+    await fireEvent.click(await button('Read about Potassium nitrate'));
+    expect(await agreed).toBe(true);
   });
 });
