@@ -49,8 +49,8 @@ export function bestPlan(
   memory: Map<string, LimitPrices>,
   known?: Packing[],
 ): Best {
-  const most = known ? Infinity : dearest(model);
-  let guess = known ? Infinity : most / 64;
+  const most = dearest(model);
+  let guess = Infinity;
   let found = known;
   for (;;) {
     const search = new PlanSearch(model, covers, budget, memory, guess);
@@ -58,10 +58,12 @@ export function bestPlan(
       if (found) search.offer(found);
       const plan = search.run();
       if (plan && plan.cost <= guess) return { plan, exact: true };
-      if (guess > most) return { plan, exact: true };
-      // A plan met on the way, too dear to be proven best, is the next guess.
+      // A plan met on the way, too dear to be proven best, is what the next search has to beat.
       found = plan?.packings;
-      guess = plan ? plan.cost : guess * 4;
+      if (plan) guess = Infinity;
+      else if (guess === Infinity) guess = most / 64;
+      else if (guess > most) return { plan: null, exact: true };
+      else guess *= 4;
     } catch (error) {
       if (!(error instanceof OutOfTime)) throw error;
       return { plan: search.best, exact: false };

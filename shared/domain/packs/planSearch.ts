@@ -30,7 +30,7 @@ export class PlanSearch {
     readonly budget: Budget,
     /** Bounds of earlier searches by choice of terms; the need of some lines may have changed. */
     readonly memory: Map<string, LimitPrices>,
-    /** Plans dearer than this aren't looked for. */
+    /** Plans dearer than this aren't looked for; Infinity when a quick plan is to be beaten. */
     readonly guess = Infinity,
   ) {
     this.#options = model.suppliers.flatMap((supplier, index): [number, ShippingOption[]][] =>
@@ -54,7 +54,8 @@ export class PlanSearch {
     quickPlans(this.model, this.covers, (packings) => this.offer(packings));
     const all = this.model.suppliers.map(() => true);
     const goods = this.#plainValue(all);
-    if (goods === Infinity) return null;
+    // Without a plan to beat nor a guess there is nothing to bound the search.
+    if (goods === Infinity || this.#most() === Infinity) return null;
     const choices = this.#options.reduce((product, [, ways]) => product * ways.length, 1);
     if (choices > mostListed) this.#dive(0, new Map());
     else this.#list(goods);

@@ -1,5 +1,5 @@
 import type { LineCovers } from './lineCovers.ts';
-import { termsCost, type PackModel, type SupplierModel } from './packModel.ts';
+import { termsCost, type LineModel, type PackModel, type SupplierModel } from './packModel.ts';
 import { makePacking, type Packing } from './packing.ts';
 
 function basket(packings: readonly Packing[], supplier: number): { value: number; mass: number } {
@@ -46,11 +46,75 @@ function lifted(
   return packings.with(best.line, makePacking(old.line, counts, model.suppliers));
 }
 
+/** A cover of a line taken without looking for a better one: one item, else the cheapest first. */
+function roughCover(line: LineModel, model: PackModel, allowed: readonly boolean[]) {
+  const usable = line.items
+    .map((item, place) => ({ ...item, place }))
+    .filter((item) => allowed[item.supplier])
+    .sort((a, b) => a.price / a.mass - b.price / b.mass);
+  const take = (items: typeof usable): Packing | null => {
+    const counts = line.items.map(() => 0);
+    let rest = line.need;
+    for (const { place, mass, max } of items) {
+      const count = rest > 0 ? Math.min(max, Math.ceil(rest / mass)) : 0;
+      counts[place] = count;
+      rest -= count * mass;
+    }
+    return rest <= 0 ? makePacking(line, counts, model.suppliers) : null;
+  };
+  let best: Packing | null = null;
+  for (const items of [usable, ...usable.map((item) => [item])]) {
+    const packing = take(items);
+    if (packing && packing.cost < (best?.cost ?? Infinity)) best = packing;
+  }
+  return best;
+}
+
+type Cover = (line: LineModel, allowed: readonly boolean[]) => Packing | null;
+
+function coverAll(model: PackModel, cover: Cover, allowed: readonly boolean[]): Packing[] | null {
+  const packings: Packing[] = [];
+  for (const line of model.lines) {
+    const packing = cover(line, allowed);
+    if (!packing) return null;
+    packings.push(packing);
+  }
+  return packings;
+}
+
+/** Covers all lines; fills up suppliers whose terms aren't met, then leaves them out one by one. */
+function descend(
+  model: PackModel,
+  cover: Cover,
+  start: boolean[],
+  offer: (packings: Packing[]) => void,
+): void {
+  let allowed = start;
+  for (let packings = coverAll(model, cover, allowed); packings;) {
+    offer(packings);
+    let full: Packing[] | null = packings;
+    const bad = unmet(model, packings);
+    for (const s of bad) full &&= lifted(model, full, s);
+    if (full) offer(full);
+    const at: readonly Packing[] = packings;
+    bad.sort((a, b) => basket(at, a).value - basket(at, b).value);
+    packings = null;
+    for (const s of bad) {
+      const fewer = allowed.with(s, false);
+      packings = coverAll(model, cover, fewer);
+      if (!packings) continue;
+      allowed = fewer;
+      break;
+    }
+  }
+}
+
 /**
- * Offers plans found without searching, so that there is something to beat: best covers from sets of
- * suppliers, those with unmet terms filled up or left out one by one.
+ * Offers plans found without searching, so that there is something to beat, and something to show
+ * when time runs out: covers from sets of suppliers, first rough ones, then the best of each line.
  *
  * @param offer takes a plan's packings; whether its terms are met is the taker's to check
+ * @throws OutOfTime after the rough ones
  */
 export function quickPlans(
   model: PackModel,
@@ -59,44 +123,18 @@ export function quickPlans(
 ): void {
   const shared = model.suppliers.flatMap((supplier, s) => (supplier.shared ? [s] : []));
   const all = model.suppliers.map(() => true);
-
-  const cover = (allowed: boolean[]): Packing[] | null => {
-    const packings: Packing[] = [];
-    for (const line of model.lines) {
-      const packing = covers.best(line, allowed);
-      if (!packing) return null;
-      packings.push(packing);
-    }
-    return packings;
-  };
-
-  const descend = (start: boolean[]): void => {
-    let allowed = start;
-    for (let packings = cover(allowed); packings;) {
-      offer(packings);
-      let full: Packing[] | null = packings;
-      const bad = unmet(model, packings);
-      for (const s of bad) full &&= lifted(model, full, s);
-      if (full) offer(full);
-      const at: readonly Packing[] = packings;
-      bad.sort((a, b) => basket(at, a).value - basket(at, b).value);
-      packings = null;
-      for (const s of bad) {
-        const fewer = allowed.with(s, false);
-        packings = cover(fewer);
-        if (!packings) continue;
-        allowed = fewer;
-        break;
-      }
-    }
-  };
-
-  descend(all);
-  for (const s of shared) descend(all.with(s, false));
-  const pairs = shared.length <= 8 ? shared : [];
   const none = all.map((_, s) => !shared.includes(s));
+
+  const rough: Cover = (line, allowed) => roughCover(line, model, allowed);
+  descend(model, rough, all, offer);
+  for (const s of shared) descend(model, rough, none.with(s, true), offer);
+
+  const best: Cover = (line, allowed) => covers.best(line, allowed);
+  descend(model, best, all, offer);
+  for (const s of shared) descend(model, best, all.with(s, false), offer);
+  const pairs = shared.length <= 8 ? shared : [];
   for (const s of shared) {
-    descend(none.with(s, true));
-    for (const t of pairs) if (t > s) descend(none.with(s, true).with(t, true));
+    descend(model, best, none.with(s, true), offer);
+    for (const t of pairs) if (t > s) descend(model, best, none.with(s, true).with(t, true), offer);
   }
 }

@@ -95,17 +95,18 @@ describe('the budget', () => {
     const asked = hardRequest();
     const started = performance.now();
     const made = planPacks(asked, 200);
-    expect(performance.now() - started).toBeLessThan(1500);
+    expect(performance.now() - started).toBeLessThan(2000);
     expect(made).toMatchObject({ feasible: true, exact: false });
     expect(made.nextStep).toBeUndefined();
     const price = pricePacks(asked, made.packs);
     expect(price).toMatchObject({ feasible: true, totalMinor: made.totalMinor });
   });
 
-  it('says so when there was no time for any plan', () => {
-    const made = planPacks(hardRequest(), 0);
-    expect(made).toMatchObject({ feasible: false, exact: false, packs: {} });
-    expect(made.reason).toMatch(/time/);
+  it('has a plan to show even when there is no time at all', () => {
+    const asked = hardRequest();
+    const made = planPacks(asked, 0);
+    expect(made).toMatchObject({ feasible: true, exact: false });
+    expect(pricePacks(asked, made.packs)).toMatchObject({ feasible: true });
   });
 
   it("doesn't make an easy plan less exact", () => {
