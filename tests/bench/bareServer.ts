@@ -16,23 +16,24 @@ app.get('/sheet', async (_req, res) => {
   res.type('json').send(rows[0]?.body ?? '');
 });
 
-app.put('/pledges/:id', express.json(), async (req, res) => {
-  const { wantedMg, version } = req.body as { wantedMg: number; version: number };
+/** One update (of a row that many may share: the buy's counter) and one insert, in one transaction. */
+app.put('/pledges/:row', express.json(), async (req, res) => {
+  const { wantedMg } = req.body as { wantedMg: number };
   const client = await pool.connect();
   try {
     await client.query('begin');
     const { rows } = await client.query<{ version: number }>({
       name: 'bare-update',
-      text: `update bench_pledges set wanted_mg = $2, version = version + 1 where id = $1 and version = $3 returning version`,
-      values: [req.params.id, wantedMg, version],
+      text: 'update bench_rows set version = version + 1, wanted_mg = $2 where id = $1 returning version',
+      values: [req.params.row, wantedMg],
     });
     await client.query({
       name: 'bare-insert',
-      text: 'insert into bench_audit (pledge_id, wanted_mg) values ($1, $2)',
-      values: [req.params.id, wantedMg],
+      text: 'insert into bench_changes (row_id, wanted_mg) values ($1, $2)',
+      values: [req.params.row, wantedMg],
     });
     await client.query('commit');
-    res.status(rows.length === 1 ? 200 : 409).json({ version: rows[0]?.version ?? null });
+    res.json({ version: rows[0]?.version });
   } catch (error) {
     await client.query('rollback');
     throw error;

@@ -1,5 +1,5 @@
+import type pg from 'pg';
 import type { SheetPledge, SheetTerms } from '#shared/domain/buys/sheetTerms.ts';
-import { pool } from '../../config/database.ts';
 import { presentTerms, termsColumns, type TermsRow } from '../buys/loadSheetTerms.ts';
 
 /** What a plan depends on: the terms and what is pooled on each line, whoever pledged it. */
@@ -25,8 +25,15 @@ const groundSql = `select ${termsColumns}, b.sheet_version, b.plan_version, b.pl
   from buys b join clubs c on c.id = b.club_id where b.id = $1`;
 
 /** Reads what a buy's plan depends on, in one prepared statement; null when there is no such buy. */
-export async function loadPlanGround(buyId: string): Promise<PlanGround | null> {
-  const { rows } = await pool.query<Row>({ name: 'plan-ground', text: groundSql, values: [buyId] });
+export async function loadPlanGround(
+  buyId: string,
+  client: pg.ClientBase,
+): Promise<PlanGround | null> {
+  const { rows } = await client.query<Row>({
+    name: 'plan-ground',
+    text: groundSql,
+    values: [buyId],
+  });
   const row = rows[0];
   if (!row) return null;
   return {
