@@ -1,6 +1,8 @@
+import { fileURLToPath } from 'node:url';
 import { defineConfig } from '#q-app/wrappers';
 import { inlineIcons } from './vite.icons.ts';
 
+const ownStyles = fileURLToPath(new URL('./src/css/quasar/index.scss', import.meta.url));
 const api = { target: process.env.TAREWELL_DEV_API ?? 'http://127.0.0.1:4681' };
 
 export default defineConfig(() => ({
@@ -23,6 +25,7 @@ export default defineConfig(() => ({
     distDir: 'dist/spa',
     typescript: { strict: true, vueShim: false },
     vitePlugins: [inlineIcons()],
+    alias: { 'quasar/dist/quasar.sass': ownStyles },
   },
   devServer: {
     host: '127.0.0.1',
