@@ -19,8 +19,13 @@ export interface SocketData {
   looking: { buyId: string; clubId: string; membershipId: string; name: string }[];
 }
 
-export type LiveServer = Server<ClientEvents, ServerEvents, Record<string, never>, SocketData>;
-export type LiveSocket = Socket<ClientEvents, ServerEvents, Record<string, never>, SocketData>;
+/** What the processes tell each other: an event for the sockets of a room. */
+export interface ProcessEvents {
+  relay: (message: { room: string; event: keyof ServerEvents; args: unknown[] }) => void;
+}
+
+export type LiveServer = Server<ClientEvents, ServerEvents, ProcessEvents, SocketData>;
+export type LiveSocket = Socket<ClientEvents, ServerEvents, ProcessEvents, SocketData>;
 
 /** Socket.IO over the session cookie; websocket only, so that no sticky sessions are needed. */
 export function attachSockets(http: HttpServer): LiveServer {
@@ -36,6 +41,9 @@ export function attachSockets(http: HttpServer): LiveServer {
   io.adapter(
     createAdapter(pool, { errorHandler: (error) => logger.warn({ err: error }, 'socket adapter') }),
   );
+  io.on('relay', ({ room, event, args }) => {
+    io.local.to(room).emit(event, ...(args as Parameters<ServerEvents[typeof event]>));
+  });
   const onHandshake =
     (middleware: (req: Request, res: Response, next: () => void) => void) =>
     (req: Request & { _query: Record<string, string> }, res: Response, next: () => void) => {

@@ -9,6 +9,20 @@ export function useServer(server: LiveServer): void {
   io = server;
 }
 
+/**
+ * To the sockets of this process at once, then to the other processes, whose sockets hear it by `relay`: a plain emit
+ * would wait for the database to take the message before it told anyone here.
+ */
+function emitTo<E extends keyof ServerEvents>(
+  room: string,
+  event: E,
+  args: Parameters<ServerEvents[E]>,
+): void {
+  if (!io) return;
+  io.local.to(room).emit(event, ...args);
+  io.serverSideEmit('relay', { room, event, args });
+}
+
 /** Sends an event to everyone in a buy's room, in all processes. Never throws: what is committed stays committed. */
 export function publishToBuy<E extends keyof ServerEvents>(
   buyId: string,
@@ -16,7 +30,7 @@ export function publishToBuy<E extends keyof ServerEvents>(
   ...args: Parameters<ServerEvents[E]>
 ): void {
   try {
-    io?.to(`buy:${buyId}`).emit(event, ...args);
+    emitTo(`buy:${buyId}`, event, args);
   } catch (error) {
     logger.error({ err: error, event }, 'publish failed');
   }
@@ -29,7 +43,7 @@ export function publishToAccount<E extends keyof ServerEvents>(
   ...args: Parameters<ServerEvents[E]>
 ): void {
   try {
-    io?.to(`account:${accountId}`).emit(event, ...args);
+    emitTo(`account:${accountId}`, event, args);
   } catch (error) {
     logger.error({ err: error, event }, 'publish failed');
   }

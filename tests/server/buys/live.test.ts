@@ -4,6 +4,7 @@ import { Membership } from '#server/models/Membership.ts';
 import { BuyChanged, BuyLookers, BuyPlan } from '#shared/schemas/live.ts';
 import type { SheetChanges } from '#shared/schemas/sheet.ts';
 import { listen, type LiveClient } from '#tests/support/live.ts';
+import { startProcess } from '#tests/support/otherProcess.ts';
 import { givePledge, makeSheetWorld, type SheetWorld } from '#tests/support/sheetWorld.ts';
 import type { Person } from '#tests/support/world.ts';
 
@@ -174,5 +175,33 @@ describe('whom the room refuses', () => {
     await expect.poll(() => seen.length).toBe(1);
     await new Promise((resolve) => setTimeout(resolve, 150));
     expect(heard).toEqual([]);
+  });
+});
+
+describe('several processes', () => {
+  it('hear of each other, each message once', async () => {
+    const world = await makeSheetWorld();
+    const { member, treasurer } = world.people;
+    const other = await startProcess();
+    try {
+      const here = await enter(world, treasurer);
+      const heard = hear<BuyChanged>(here.client, 'buy:changed');
+      const browser = await live.signIn(member.email);
+      const reply = await fetch(`${other.origin}/api/v1${path(world, member)}`, {
+        method: 'PUT',
+        headers: {
+          'Content-Type': 'application/json',
+          'Sec-Fetch-Site': 'same-origin',
+          Cookie: browser.cookie,
+        },
+        body: JSON.stringify({ wantedMg: 400_000, upToMg: null, version: 0 }),
+      });
+      expect(reply.status).toBe(200);
+      await expect.poll(() => heard.length, { timeout: 5000 }).toBe(1);
+      await new Promise((resolve) => setTimeout(resolve, 200));
+      expect(heard).toMatchObject([{ kind: 'pledge', pledge: { wantedMg: 400_000 } }]);
+    } finally {
+      await other.stop();
+    }
   });
 });
