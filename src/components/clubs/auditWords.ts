@@ -1,26 +1,7 @@
+import { auditActs } from 'src/components/clubs/auditActs.ts';
 import type { Format as FullFormat } from 'src/composables/useFormat.ts';
 
 type Format = Pick<FullFormat, 'money' | 'mass' | 'percent' | 'dateTime'>;
-
-const acts: Record<string, string> = {
-  'clubs.found': 'founded the club',
-  'clubs.settings': 'changed the settings',
-  'clubs.invite': 'invited',
-  'clubs.join_link': 'made a join link',
-  'clubs.invitation_resend': 'sent an invitation again to',
-  'clubs.invitation_revoke': 'revoked an invitation',
-  'clubs.ask_to_join': 'asked to join',
-  'clubs.join': 'joined',
-  'clubs.approve': 'let in',
-  'clubs.refuse': 'turned down',
-  'clubs.remove': 'removed',
-  'clubs.leave': 'left',
-  'clubs.roles': 'changed the roles of',
-  'clubs.rename': 'changed their name',
-  'clubs.guest_add': 'added the guest',
-  'clubs.guest_change': 'changed the guest',
-  'buys.withdraw': 'withdrew a pledge of',
-};
 
 /** Acts that are about the person who does them: their name isn't said twice. */
 const ofOneself = new Set(['clubs.join', 'clubs.ask_to_join', 'clubs.leave', 'clubs.rename']);
@@ -34,7 +15,7 @@ const spaced = (name: string) =>
 /** 'changed the roles of'; an act without words of its own is spelt out: 'buys: lock'. */
 export function sayAct(action: string): string {
   const [feature, verb] = action.split('.');
-  return acts[action] ?? (verb ? `${spaced(feature ?? '')}: ${spaced(verb)}` : spaced(action));
+  return auditActs[action] ?? (verb ? `${spaced(feature ?? '')}: ${spaced(verb)}` : spaced(action));
 }
 
 /** Whether the subject's name follows the act. */
