@@ -1,7 +1,9 @@
 import { randomUUID } from 'node:crypto';
 import { execute, select, transact } from '#server/config/database.ts';
 import { handOver } from '#server/services/pickup/handOver.ts';
+import { priceStock } from '#server/services/pickup/priceStock.ts';
 import { readDesk } from '#server/services/pickup/readDesk.ts';
+import { readShelf } from '#server/services/pickup/readShelf.ts';
 import { settleBuy } from '#server/services/orders/settleBuy.ts';
 import { addOwnSalt } from '#server/services/salts/changeOwnSalt.ts';
 import { updateClub } from '#server/services/clubs/updateClub.ts';
@@ -60,6 +62,14 @@ async function makeQuillmere(accounts: Map<string, string>): Promise<DemoClub> {
   return club;
 }
 
+/** What the settled buy left on the shelf is for sale. */
+async function priceShelf(club: DemoClub): Promise<void> {
+  const actor = await club.actor(parts.organiser);
+  for (const { id, version } of (await readShelf(actor)).stock) {
+    await priceStock(actor, id, { priceMinorPerKg: 420, version });
+  }
+}
+
 /** A buy of last summer: collected, paid and settled. */
 async function makeSettled(club: DemoClub): Promise<void> {
   const head = { name: 'Summer salts 2026', closesAt: inDays(1), splitsAt: inDays(2, 3), note: '' };
@@ -89,6 +99,7 @@ async function makeSettled(club: DemoClub): Promise<void> {
   const { termsVersion } = await Buy.findByPk(buy.id, { rejectOnEmpty: true });
   await settleBuy(await club.buyActor(parts.treasurer, buy.id), termsVersion);
   await buy.backdate(130);
+  await priceShelf(club);
 }
 
 /** A buy at the split: half of it is weighed, one member has not paid. */
