@@ -6,7 +6,6 @@ import type {
   PacksBody,
   PledgeBody,
   PledgeReply,
-  ReopenBody,
   SheetChanges,
   SheetReply,
 } from '#shared/schemas/sheet.ts';
@@ -40,9 +39,6 @@ export const postProposal = (place: BuyPlace, proposal: string, accept: boolean)
 
 export const postLock = (place: BuyPlace, termsVersion: number) =>
   api.post<BuyHeader>(at(place, '/lock'), { termsVersion });
-
-export const postReopen = (place: BuyPlace, body: ReopenBody) =>
-  api.post<BuyHeader>(at(place, '/reopen'), body);
 
 export const postExtend = (place: BuyPlace, body: ExtendBody) =>
   api.post<BuyHeader>(at(place, '/extend'), body);

@@ -3,7 +3,6 @@ import type {
   ExtendBody,
   LineTotal,
   PacksBody,
-  ReopenBody,
   MySheet,
   PledgeChange,
   SheetPlan,
@@ -261,7 +260,6 @@ export const useSheetStore = defineStore('sheet', () => {
   const lock = (termsVersion: number) => act((to) => api.postLock(to, termsVersion));
   const extend = (body: ExtendBody) => act((to) => api.postExtend(to, body));
   const choosePacks = (body: PacksBody) => act((to) => api.putPacks(to, body));
-  const reopen = (to: api.BuyPlace, body: ReopenBody) => api.postReopen(to, body);
 
   let listening = false;
   /** Keeps the sheet live for as long as a page shows it; gives the function that stops it. */
@@ -321,7 +319,6 @@ export const useSheetStore = defineStore('sheet', () => {
     lock,
     extend,
     choosePacks,
-    reopen,
     catchUp,
     enter,
   };
