@@ -80,7 +80,6 @@ export function useWeighing({ sheet, portion, line, bag, acts }: Given) {
     form.clear();
   }
 
-  watch(() => portion().id, begin);
   watch(readingMg, () => {
     lookedAgain.value = false;
     // Another reading is another weighing; only the same one may be sent again.

@@ -8,11 +8,12 @@ import { ApiProblem } from 'src/api/problem.ts';
 import { lineWith, noChange, portionWith, sheetWith } from '#tests/support/splitSheets.ts';
 
 const weigh = vi.fn<SplitActs['weigh']>();
+const kept = vi.fn<(portionId: string) => void>();
 const claim = vi.fn<SplitActs['claim']>(() => Promise.resolve(noChange));
 
 function open(changes: Parameters<typeof portionWith>[0] = {}) {
   const portion = portionWith(changes);
-  render(WeighPanel, {
+  return render(WeighPanel, {
     props: {
       sheet: sheetWith({ portions: [portion] }),
       portion,
@@ -21,6 +22,7 @@ function open(changes: Parameters<typeof portionWith>[0] = {}) {
       organises: false,
       acts: { weigh, claim } as Partial<SplitActs> as SplitActs,
       bag: 'bag-1',
+      kept,
     },
   });
 }
@@ -31,6 +33,7 @@ beforeEach(() => {
   setActivePinia(createPinia());
   weigh.mockReset().mockResolvedValue(noChange);
   claim.mockClear();
+  kept.mockClear();
   useStation().value = { name: 'Table 1', scale: 'Blue', divisionMg: 100, capacityMg: 2_000_000 };
 });
 
@@ -53,6 +56,23 @@ describe('WeighPanel', () => {
       capacityMg: 2_000_000,
       secondLook: false,
     });
+  });
+
+  it('tells which portion was kept, also when the next one is on the scale by then', async () => {
+    let answer = () => {};
+    weigh.mockReturnValue(
+      new Promise((resolve) => {
+        answer = () => resolve(noChange);
+      }),
+    );
+    const { unmount } = open();
+    await fireEvent.update(reading(), '1200');
+    await fireEvent.submit(reading().form!);
+    await vi.waitFor(() => expect(weigh).toHaveBeenCalledTimes(1));
+    unmount();
+    expect(kept).not.toHaveBeenCalled();
+    answer();
+    await vi.waitFor(() => expect(kept).toHaveBeenCalledWith('p-1'));
   });
 
   it('keeps nothing above the band', async () => {
