@@ -102,7 +102,7 @@ async function makeSettled(club: DemoClub): Promise<void> {
   await priceShelf(club);
 }
 
-/** A buy at the split: half of it is weighed, one member has not paid. */
+/** A buy at the split: half of it is weighed. */
 async function makeSplitting(club: DemoClub): Promise<void> {
   const by = { organiser: 'ravi', treasurer: 'orla' };
   const head = {
