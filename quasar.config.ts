@@ -25,6 +25,8 @@ export default defineConfig(() => ({
     distDir: 'dist/spa',
     typescript: { strict: true, vueShim: false },
     vitePlugins: [inlineIcons()],
+    // A worker in pieces, so that it too loads a part only when it needs it.
+    extendViteConf: () => ({ worker: { format: 'es' as const } }),
     alias: { 'quasar/dist/quasar.sass': ownStyles },
   },
   devServer: {

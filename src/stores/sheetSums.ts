@@ -1,4 +1,4 @@
-import type { SheetSums, SheetSumsRequest } from '#shared/domain/buys/sheetSums.ts';
+import type { SheetSums, SumsGround } from '#shared/domain/buys/sheetSums.ts';
 import type { SheetPlan } from '#shared/schemas/sheet.ts';
 import { shallowRef } from 'vue';
 import { makeSums } from 'src/workers/sumsThread.ts';
@@ -8,7 +8,7 @@ const BUDGET_MS = 400;
 const inOrder = (packs: Record<string, number>) => JSON.stringify(Object.entries(packs).sort());
 
 /** What the sums are made of right now; `settled`: nothing is still being saved. */
-export type SumsGround = Omit<SheetSumsRequest, 'known' | 'budgetMs'> & {
+export type SheetGround = SumsGround & {
   version: number;
   settled: boolean;
   plan: SheetPlan | null;
@@ -19,7 +19,7 @@ export type SumsGround = Omit<SheetSumsRequest, 'known' | 'budgetMs'> & {
  * @param differs told when both planned the same version exactly and chose other packs
  */
 export function makeSheetSums(
-  ground: () => SumsGround | null,
+  ground: () => SheetGround | null,
   differs: (defect: { sheetVersion: number; mine: string; server: string }) => void,
 ) {
   const sums = shallowRef<SheetSums | null>(null);

@@ -1,4 +1,5 @@
-import type { SheetSums, SheetSumsRequest } from '#shared/domain/buys/sheetSums.ts';
+import type { SheetSums } from '#shared/domain/buys/sheetSums.ts';
+import type { SumsRequest } from 'src/workers/answerSums.ts';
 import type { SumsAnswer, SumsTask } from 'src/workers/sheetSums.worker.ts';
 
 type Waiting = { resolve: (sums: SheetSums) => void; reject: (error: Error) => void };
@@ -24,10 +25,10 @@ function start(): Worker {
 }
 
 /** The sheet's sums, off the page's own thread; where there are no workers, on it. */
-export async function makeSums(request: SheetSumsRequest): Promise<SheetSums> {
+export async function makeSums(request: SumsRequest): Promise<SheetSums> {
   if (typeof Worker === 'undefined') {
-    const { sheetSums } = await import('#shared/domain/buys/sheetSums.ts');
-    return sheetSums(request);
+    const { answerSums } = await import('src/workers/answerSums.ts');
+    return answerSums(request);
   }
   worker ??= start();
   const task: SumsTask = { id: next, request };

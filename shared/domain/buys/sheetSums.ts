@@ -1,10 +1,9 @@
 import { reserveMg } from '../mass/milligrams.ts';
 import { perGram } from '../packs/pricePacks.ts';
-import { planPacks } from '../packs/planPacks.ts';
 import type { PackPlan } from '../packs/packTypes.ts';
 import { compareIds } from '../shares/pledgeOrder.ts';
 import type { MemberShare, ShareSheet } from '../shares/shareTypes.ts';
-import { estimateOf, packRequestOf, planInForce, pooledMg } from './requests.ts';
+import { estimateOf, planInForce, pooledMg } from './requests.ts';
 import type { SheetLine, SheetPledge, SheetTerms } from './sheetTerms.ts';
 
 /** Packs of one size chosen for a line. */
@@ -38,14 +37,12 @@ export type SheetSums = {
   shelfMinor: number;
 };
 
-/** What `sheetSums` works on. `known`: the server's plan when it is for exactly these pledges. */
-export type SheetSumsRequest = {
+/** What the sums are made of, once the packs are planned. `override`: the organiser's own choice of packs. */
+export type SumsGround = {
   terms: SheetTerms;
   pledges: SheetPledge[];
   override: Record<string, number> | null;
-  known: PackPlan | null;
   me: string;
-  budgetMs: number;
 };
 
 function packsOf(lineId: string, terms: SheetTerms, packs: Record<string, number>): ChosenPack[] {
@@ -122,13 +119,9 @@ function gotOtherwise(sheet: ShareSheet, pledges: readonly SheetPledge[]): Sheet
   return got;
 }
 
-/**
- * Plans (unless the plan for these pledges is known) and shares out: the one function that a browser runs after each
- * change and that the server's own result is compared with.
- */
-export function sheetSums(request: SheetSumsRequest): SheetSums {
-  const { terms, pledges, override, known, me, budgetMs } = request;
-  const computed = known ?? planPacks(packRequestOf(terms, pledges), budgetMs);
+/** Shares out by a computed plan, or by the organiser's choice where that can be had. */
+export function sumsOfPlan(ground: SumsGround, computed: PackPlan): SheetSums {
+  const { terms, pledges, override, me } = ground;
   const { plan, overridden } = planInForce(terms, pledges, computed, override);
   const sheet = plan.feasible ? estimateOf(terms, pledges, plan) : null;
   return {

@@ -12,7 +12,8 @@ import {
   pooledMg,
   shareRequestOf,
 } from '#shared/domain/buys/requests.ts';
-import { sheetSums } from '#shared/domain/buys/sheetSums.ts';
+import { planSheetSums } from '#shared/domain/buys/planSheetSums.ts';
+import { sumsOfPlan, type SumsGround } from '#shared/domain/buys/sheetSums.ts';
 import type { SheetOffer, SheetPledge, SheetTerms } from '#shared/domain/buys/sheetTerms.ts';
 import { planPacks } from '#shared/domain/packs/planPacks.ts';
 import { shareOut } from '#shared/domain/shares/shareOut.ts';
@@ -322,16 +323,14 @@ describe('the plan in force', () => {
 
 describe('the sums of a sheet', () => {
   const pledges = [pledge('a', 'K', 23_000), pledge('b', 'K', 650, 2000), pledge('b', 'M', 400)];
-  const sums = (more: Partial<Parameters<typeof sheetSums>[0]> = {}) =>
-    sheetSums({
-      terms: terms(),
-      pledges,
-      override: null,
-      known: null,
-      me: 'b',
-      budgetMs: 1000,
-      ...more,
-    });
+  const ground = (more: Partial<SumsGround> = {}): SumsGround => ({
+    terms: terms(),
+    pledges,
+    override: null,
+    me: 'b',
+    ...more,
+  });
+  const sums = (more: Partial<SumsGround> = {}) => planSheetSums(ground(more), 1000);
 
   it('agree with the plan and the shares they are made of', () => {
     const made = sums();
@@ -362,7 +361,7 @@ describe('the sums of a sheet', () => {
 
   it('use a plan that is known, and say nothing where none is feasible', () => {
     const known = { ...planPacks(packRequestOf(terms(), pledges)), packs: { k25: 2, m5: 1 } };
-    expect(sums({ known }).lines.K?.boughtMg).toBe(50_000_000);
+    expect(sumsOfPlan(ground(), known).lines.K?.boughtMg).toBe(50_000_000);
     const none = sums({ terms: terms({ offers: [] }) });
     expect(none.plan.feasible).toBe(false);
     expect(none.mine).toBeNull();
