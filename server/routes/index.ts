@@ -66,11 +66,21 @@ const upload: RequestHandler = (req, res, next) => {
 /** Router of /api/v1. */
 export function apiRouter(): Router {
   const router = Router();
+  // A router tries its routes one after the other, so each method has its own.
+  const byMethod = new Map<string, Router>();
   for (const route of allRoutes) {
     const handlers: RequestHandler[] = [...route.before];
     if (route.takesFile) handlers.push(upload);
-    router[route.method](route.path, ...handlers, action(route));
+    const own = byMethod.get(route.method) ?? Router();
+    byMethod.set(route.method, own);
+    own[route.method](route.path, ...handlers, action(route));
   }
+  router.use((req, res, next) => {
+    const method = req.method === 'HEAD' ? 'get' : req.method.toLowerCase();
+    const own = byMethod.get(method);
+    if (own) own(req, res, next);
+    else next();
+  });
   router.use(noSuchRoute);
   return router;
 }

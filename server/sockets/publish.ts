@@ -18,9 +18,13 @@ function emitTo<E extends keyof ServerEvents>(
   event: E,
   args: Parameters<ServerEvents[E]>,
 ): void {
-  if (!io) return;
-  io.local.to(room).emit(event, ...args);
-  io.serverSideEmit('relay', { room, event, args });
+  const server = io;
+  if (!server) return;
+  server.local.to(room).emit(event, ...args);
+  // Nobody is told while this process is alone.
+  Promise.resolve(server.of('/').adapter.serverCount())
+    .then((processes) => processes > 1 && server.serverSideEmit('relay', { room, event, args }))
+    .catch((error: unknown) => logger.error({ err: error, event }, 'relay failed'));
 }
 
 /** Sends an event to everyone in a buy's room, in all processes. Never throws: what is committed stays committed. */
