@@ -1,4 +1,3 @@
-import { spawn, type ChildProcess } from 'node:child_process';
 import { randomBytes } from 'node:crypto';
 import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
@@ -6,16 +5,25 @@ import path from 'node:path';
 import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
 import pg from 'pg';
 import { browserFlags } from './browserFlags.ts';
+import { startServer, type Server } from './serverProcess.ts';
+
+type Look = { phone?: boolean; url?: string };
 
 /** A Tarewell of its own: real server, real database, real browsers. */
 export interface Instance {
   readonly url: string;
   /** Rows of a statement, for what no page shows. */
   query<T extends pg.QueryResultRow>(sql: string, values?: unknown[]): Promise<T[]>;
-  /** A fresh browser, signed out. */
-  browse(options?: { phone?: boolean }): Promise<Person>;
+  /** A fresh browser, signed out; at `url` when another process is meant. */
+  browse(options?: Look): Promise<Person>;
   /** A fresh browser in which a person of the demo is signed in. */
-  as(email: string, options?: { phone?: boolean }): Promise<Person>;
+  as(email: string, options?: Look): Promise<Person>;
+  /** Kills the server without a word, as a power cut does. */
+  kill(): Promise<void>;
+  /** Starts it again on the same database and port. */
+  startAgain(): Promise<void>;
+  /** One more process on the same database; gives its address. */
+  startAnother(): Promise<string>;
   stop(): Promise<void>;
 }
 
@@ -26,34 +34,11 @@ export interface Person {
   readonly complaints: string[];
 }
 
-const startMs = 120_000;
-const project = path.join(import.meta.dirname, '..', '..');
-
 async function onCluster(adminUrl: string, sql: string): Promise<void> {
   const client = new pg.Client({ connectionString: adminUrl });
   await client.connect();
   await client.query(sql);
   await client.end();
-}
-
-function waitReady(server: ChildProcess): Promise<string> {
-  return new Promise((resolve, reject) => {
-    let said = '';
-    const timer = setTimeout(() => reject(new Error(`server not ready:\n${said}`)), startMs);
-    const listen = (chunk: Buffer) => {
-      said += chunk.toString();
-      const url = /Tarewell is ready at (\S+)/.exec(said)?.[1];
-      if (!url) return;
-      clearTimeout(timer);
-      resolve(url);
-    };
-    server.stdout?.on('data', listen);
-    server.stderr?.on('data', listen);
-    server.once('exit', (code) => {
-      clearTimeout(timer);
-      reject(new Error(`server ended with ${code}:\n${said}`));
-    });
-  });
 }
 
 async function watch(context: BrowserContext): Promise<Person> {
@@ -80,41 +65,34 @@ export async function startInstance(options: { demo: boolean }): Promise<Instanc
   databaseUrl.pathname = `/${name}`;
   const folder = mkdtempSync(path.join(tmpdir(), 'tarewell-e2e-'));
   chmodSync(folder, 0o711);
-  const server = spawn(process.execPath, ['--import', 'tsx', 'server/main.ts'], {
-    cwd: project,
-    stdio: ['ignore', 'pipe', 'pipe'],
-    env: {
-      ...process.env,
-      NODE_ENV: 'test',
-      HOST: '127.0.0.1',
-      PORT: '0',
+  const start = (port: string) =>
+    startServer({
+      PORT: port,
       DATABASE_URL: databaseUrl.href,
       TAREWELL_DATA: folder,
       TAREWELL_DEMO: options.demo ? '1' : '0',
-      LOG_LEVEL: 'warn',
-    },
-  });
+    });
   const pool = new pg.Pool({ connectionString: databaseUrl.href, max: 2 });
   pool.on('error', () => undefined);
-  const stopServer = async () => {
-    if (server.exitCode === null) {
-      const ended = new Promise((resolve) => server.once('exit', resolve));
-      server.kill('SIGTERM');
-      await ended;
-    }
+  const servers: Server[] = [];
+  let browser: Browser | undefined;
+  const stop = async () => {
+    await browser?.close();
+    await Promise.all(servers.map((server) => server.end('SIGTERM')));
     await pool.end();
     await onCluster(adminUrl, `drop database if exists ${name} with (force)`);
     rmSync(folder, { recursive: true, force: true });
   };
-  let browser: Browser | undefined;
   try {
-    const url = await waitReady(server);
+    const first = await start('0');
+    servers.push(first);
+    const { url } = first;
     browser = await chromium.launch({ executablePath: '/usr/bin/chromium', args: browserFlags });
     const chrome = browser;
-    const browse = async ({ phone = false } = {}) =>
+    const browse = async ({ phone = false, url: baseURL = url }: Look = {}) =>
       watch(
         await chrome.newContext({
-          baseURL: url,
+          baseURL,
           viewport: phone ? { width: 390, height: 844 } : { width: 1440, height: 900 },
           hasTouch: phone,
           isMobile: phone,
@@ -128,23 +106,28 @@ export async function startInstance(options: { demo: boolean }): Promise<Instanc
       query: async <T extends pg.QueryResultRow>(sql: string, values: unknown[] = []) =>
         (await pool.query<T>(sql, values)).rows,
       browse,
-      as: async (email, how) => {
+      as: async (email, how = {}) => {
         const person = await browse(how);
         const reply = await person.context.request.post('/api/v1/session/demo', {
           data: { email },
-          headers: { Origin: url, 'Sec-Fetch-Site': 'same-origin' },
+          headers: { Origin: how.url ?? url, 'Sec-Fetch-Site': 'same-origin' },
         });
         if (!reply.ok()) throw new Error(`sign-in as ${email}: ${reply.status()}`);
         return person;
       },
-      stop: async () => {
-        await chrome.close();
-        await stopServer();
+      kill: () => servers[0]?.end('SIGKILL') ?? Promise.resolve(),
+      startAgain: async () => {
+        servers[0] = await start(new URL(url).port);
       },
+      startAnother: async () => {
+        const another = await start('0');
+        servers.push(another);
+        return another.url;
+      },
+      stop,
     };
   } catch (error) {
-    await browser?.close();
-    await stopServer();
+    await stop();
     throw error;
   }
 }

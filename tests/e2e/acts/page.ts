@@ -25,6 +25,9 @@ export const amount = (minor: number) => (minor / 100).toFixed(2);
 /** Whole grams of a number of milligrams. */
 export const grams = (mg: number) => String(mg / 1000);
 
+/** When this page was loaded: the same number as long as it isn't loaded again. */
+export const loadedAt = (page: Page) => page.evaluate(() => performance.timeOrigin);
+
 /** The dialog that is open. */
 export const dialogOf = (page: Page) => page.getByRole('dialog').last();
 
