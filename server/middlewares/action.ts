@@ -39,7 +39,8 @@ async function findActor(route: RouteDef, req: Request) {
   const accountId = req.user?.id;
   if (route.level === 'buy' && accountId !== undefined && uuid.safeParse(req.params.buy).success) {
     const { club, buy } = req.params;
-    const found = await findBuyActorAt(accountId, String(club), String(buy), requestId);
+    const alongside = route.alongside?.(req.params);
+    const found = await findBuyActorAt(accountId, String(club), String(buy), requestId, alongside);
     if (found && (found.status === 'active' || route.former)) return found;
     // Whoever isn't found is told by the steps below what is missing.
   }

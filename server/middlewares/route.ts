@@ -1,7 +1,7 @@
 import type { Readable } from 'node:stream';
 import type { Request, RequestHandler, Response } from 'express';
 import type { z } from 'zod';
-import type { AccountActor, BuyActor, ClubActor } from '../services/actors.ts';
+import type { AccountActor, Alongside, BuyActor, ClubActor } from '../services/actors.ts';
 
 /** A reply that is not plain JSON: a file, a CSV, bytes kept by version. */
 export class FileReply {
@@ -50,6 +50,8 @@ export interface RouteDef {
   readonly reply: z.ZodType | 'file';
   readonly status: number;
   readonly before: readonly RequestHandler[];
+  /** Something to be read in the actor's own statement, from the path's parameters as they came; null: nothing. */
+  readonly alongside: ((params: Record<string, unknown>) => Alongside | null) | undefined;
   readonly allow: (actor: never) => boolean;
   readonly run: (call: never) => Promise<unknown>;
 }
@@ -68,6 +70,7 @@ interface Spec<A, P, Q, B, R> {
   status?: number;
   /** Limits and the like, run before the actor is looked up. */
   before?: RequestHandler[];
+  alongside?: NonNullable<RouteDef['alongside']>;
   run: (call: Call<A, P, Q, B>) => Promise<R | FileReply>;
 }
 
@@ -89,6 +92,7 @@ function define<A, P, Q, B, R>(
     reply: spec.reply,
     status: spec.status ?? 200,
     before: spec.before ?? [],
+    alongside: spec.alongside,
     allow: spec.allow,
     run: spec.run,
   };

@@ -25,12 +25,14 @@ import { choosePacks } from '../services/sheet/choosePacks.ts';
 import { confirmHazard, confirmOnPaper } from '../services/sheet/confirmHazard.ts';
 import { extendBuy } from '../services/sheet/extendBuy.ts';
 import { lockBuy } from '../services/sheet/lockBuy.ts';
+import { pledgeAlongside } from '../services/sheet/pledgeRows.ts';
 import { readChanges } from '../services/sheet/readChanges.ts';
 import { readMySheet } from '../services/sheet/readMySheet.ts';
 import { readSheetBytes } from '../services/sheet/readSheet.ts';
 import { reopenBuy } from '../services/sheet/reopenBuy.ts';
 import { reportDefect } from '../services/sheet/reportDefect.ts';
 
+const PledgeParams = z.object({ line: Id, member: Id }).loose();
 const done = { done: true } as const;
 const defects = limit({
   name: 'defects',
@@ -86,8 +88,12 @@ const pledging: RouteDef[] = [
     method: 'put',
     path: '/lines/:line/pledges/:member',
     summary: 'What a member wants on a line; for someone else only as an organiser of the buy',
-    params: z.object({ line: Id, member: Id }).loose(),
+    params: PledgeParams,
     body: PledgeBody,
+    alongside: (params) => {
+      const ids = PledgeParams.safeParse(params);
+      return ids.success ? pledgeAlongside(ids.data.line, ids.data.member) : null;
+    },
     reply: PledgeReply,
     allow: canPledge,
     run: ({ actor, params, body }) =>

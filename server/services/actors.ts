@@ -43,6 +43,15 @@ export interface BuyActor extends ClubActor {
     /** The club shows most members only the total of a reportable salt. */
     readonly hidesReportable: boolean;
   };
+  /** What a route had read with the actor, as JSON; whose route it is knows what. */
+  readonly alongside?: unknown;
+}
+
+/** One JSON value to be read in the actor's own statement: SQL beside buys b, clubs c, with values from $4 on. */
+export interface Alongside {
+  readonly name: string;
+  readonly sql: string;
+  readonly values: readonly unknown[];
 }
 
 interface ClubRow {
@@ -192,17 +201,19 @@ export async function findBuyActorAt(
   clubSlug: string,
   buyId: string,
   requestId: string,
+  alongside?: Alongside | null,
 ): Promise<BuyActor | null> {
-  const { rows } = await pool.query<ClubRow & BuyRow>({
-    name: 'buy-actor-at',
-    text: `select ${clubColumns}, ${buyColumns} from clubs c
+  const { rows } = await pool.query<ClubRow & BuyRow & { alongside: unknown }>({
+    name: `buy-actor-at ${alongside?.name ?? ''}`,
+    text: `select ${clubColumns}, ${buyColumns}, ${alongside?.sql ?? 'null'} as alongside from clubs c
       join memberships m on m.club_id = c.id and m.account_id = $1 and m.status <> 'pending'
       join accounts a on a.id = m.account_id and a.deleted_at is null
       join buys b on b.club_id = c.id and b.id = $3
       ${buyJoins}
       where c.slug = $2 and ${buyIsSeen}`,
-    values: [accountId, clubSlug, buyId],
+    values: [accountId, clubSlug, buyId, ...(alongside?.values ?? [])],
   });
   const row = rows[0];
-  return row ? asBuyActor(asClubActor(row, requestId), buyId, row) : null;
+  const actor = row && asBuyActor(asClubActor(row, requestId), buyId, row);
+  return actor ? { ...actor, alongside: row.alongside } : null;
 }

@@ -12,6 +12,7 @@ import { byActor } from '../buys/withBuy.ts';
 import { overdueElsewhere } from '../ledger/owed.ts';
 import { DomainProblem, forbidden, invalid, notFound, stale } from '../problem.ts';
 import {
+  groundOf,
   lockForPledge,
   readPledgeGround,
   totalOfLine,
@@ -70,9 +71,14 @@ async function factsFor(
   };
 }
 
-/** What was decided on one reading of the ground. */
-async function decide(actor: BuyActor, where: Where, body: PledgeBody, tx?: Tx) {
-  const ground = await readPledgeGround(actor.buy.id, where, tx);
+/** What is decided on one reading of the ground. */
+async function decide(
+  actor: BuyActor,
+  where: Where,
+  body: PledgeBody,
+  ground: PledgeGround | undefined,
+  tx?: Tx,
+) {
   if (!ground) throw notFound('This line or member');
   const own = where.membershipId === actor.membershipId;
   const who = own ? 'member' : ground.member_guest ? 'organiserForGuest' : 'organiser';
@@ -97,7 +103,7 @@ async function decide(actor: BuyActor, where: Where, body: PledgeBody, tx?: Tx) 
     by: byActor(actor),
     before: facts.before,
   };
-  return { ground, wish, salt, facts, now, verdict, write, own };
+  return { buy: ground, wish, salt, facts, now, verdict, write, own };
 }
 
 type Decision = Awaited<ReturnType<typeof decide>>;
@@ -115,19 +121,20 @@ export async function changePledgeIn(
   body: PledgeBody,
 ): Promise<PledgeReply> {
   await lockForPledge(actor.buy.id, tx);
-  const decision = await decide(actor, where, body, tx);
-  const { ground, wish, salt, now, verdict, own } = decision;
+  const ground = await readPledgeGround(actor.buy.id, where, tx);
+  const decision = await decide(actor, where, body, ground, tx);
+  const { buy, wish, salt, now, verdict, own } = decision;
   const unchanged = { sheetVersion: actor.buy.sheetVersion, pledge: now };
   if (verdict.act === 'keep') return { ...unchanged, proposed: false };
   if (verdict.act === 'propose') {
-    await proposePledge(actor, ground, { ...where, ...wish, saltName: salt.name }, tx);
+    await proposePledge(actor, buy, { ...where, ...wish, saltName: salt.name }, tx);
     return { ...unchanged, proposed: true };
   }
   const reply = replyWith(decision, await writePledge(decision.write, tx));
-  if (!own) await tellMember(tx, reply.pledge, { actor, buy: ground, salt, before: now });
-  const hidden = ground.hides_reportable && salt.reportable;
+  if (!own) await tellMember(tx, reply.pledge, { actor, buy, salt, before: now });
+  const hidden = buy.hides_reportable && salt.reportable;
   const total = hidden ? await totalOfLine(where.lineId, tx) : null;
-  tx.afterCommit(() => tellSheets(ground.id, reply, total));
+  tx.afterCommit(() => tellSheets(buy.id, reply, total));
   return reply;
 }
 
@@ -137,22 +144,22 @@ async function changeAtOnce(
   where: Where,
   body: PledgeBody,
 ): Promise<PledgeReply | null> {
-  const decision = await decide(actor, where, body);
-  const { ground, salt, facts, now, verdict } = decision;
+  const decision = await decide(actor, where, body, groundOf(actor));
+  const { buy, salt, facts, now, verdict } = decision;
   if (verdict.act === 'keep') {
     return { sheetVersion: actor.buy.sheetVersion, pledge: now, proposed: false };
   }
-  const hidden = ground.hides_reportable && salt.reportable;
+  const hidden = buy.hides_reportable && salt.reportable;
   if (verdict.act !== 'save' || hidden) return null;
   const lowers = decision.wish.wantedMg < now.wantedMg;
   const written = await writePledgeIfUnchanged(decision.write, {
-    termsVersion: ground.terms_version,
+    termsVersion: buy.terms_version,
     version: now.version,
     beforeMs: lowers ? loweringEnds(facts) : null,
   });
   if (!written) return null;
   const reply = replyWith(decision, written);
-  tellSheets(ground.id, reply, null);
+  tellSheets(buy.id, reply, null);
   return reply;
 }
 

@@ -2,6 +2,7 @@ import type { BuyState } from '#shared/domain/buys/states.ts';
 import type { LineTotal } from '#shared/schemas/sheet.ts';
 import { pool, prepared, type Tx } from '../../config/database.ts';
 import type { By } from '../actorName.ts';
+import type { Alongside, BuyActor } from '../actors.ts';
 
 /** What a pledge's rules and notices look at in its buy. */
 export interface PledgeBuy {
@@ -38,37 +39,60 @@ export interface PledgeGround extends PledgeBuy {
   readonly at: Date | null;
 }
 
-const groundSql = `select clock_timestamp() as now, b.id, b.club_id, b.name, b.state, b.closes_at, b.frozen_at,
-    b.terms_version, case when b.reopen_reason is null then b.lowering_freeze_hours else 0 end as lowering_freeze_hours,
+type Instants = 'now' | 'closes_at' | 'frozen_at' | 'at';
+type GroundJson = Omit<PledgeGround, Instants> & Record<Instants, string | null>;
+
+/** One JSON value about a line and a member, beside `buys b` and `clubs c`; null when they aren't of that buy's club. */
+const groundSql = (line: string, member: string) => `(select row_to_json(g) from (
+  select clock_timestamp() as now, b.id, b.club_id, b.name, b.state, b.closes_at, b.frozen_at, b.terms_version,
+    case when b.reopen_reason is null then b.lowering_freeze_hours else 0 end as lowering_freeze_hours,
     l.step_mg, l.salt_id, m.display_name as member_name, m.is_guest as member_guest,
     m.status = 'active' as member_active, c.hide_reportable_grams as hides_reportable,
     exists (select 1 from hazard_confirmations h where h.membership_id = m.id and h.salt_id = l.salt_id) as confirmed,
     exists (select 1 from buy_members bm join buys o on o.id = bm.buy_id where bm.membership_id = m.id
-      and bm.buy_id <> $1 and o.due_at < clock_timestamp() and bm.vouched_at is null) as overdue_somewhere,
+      and bm.buy_id <> b.id and o.due_at < clock_timestamp() and bm.vouched_at is null) as overdue_somewhere,
     p.wanted_mg, p.up_to_mg, p.version, p.at
   from lines l
-  join buys b on b.id = l.buy_id join clubs c on c.id = b.club_id
-  join memberships m on m.id = $3 and m.club_id = b.club_id
+  join memberships m on m.id = ${member} and m.club_id = b.club_id
   left join pledges p on p.line_id = l.id and p.membership_id = m.id
-  where l.id = $2 and l.buy_id = $1 and l.removed_at is null`;
+  where l.id = ${line} and l.buy_id = b.id and l.removed_at is null) g)`;
 
-/**
- * Reads what a pledge depends on, in the transaction that holds the buy's lock, or without one for a first look;
- * undefined when the line or the person is not of this buy's club.
- */
+function readGround(json: unknown): PledgeGround | undefined {
+  if (!json) return undefined;
+  const ground = json as GroundJson;
+  const instant = (text: string | null) => (text === null ? null : new Date(text));
+  return {
+    ...ground,
+    now: instant(ground.now) ?? new Date(0),
+    closes_at: instant(ground.closes_at),
+    frozen_at: instant(ground.frozen_at),
+    at: instant(ground.at),
+  };
+}
+
+/** A first look at a pledge, read in the same statement as who asks. */
+export const pledgeAlongside = (lineId: string, membershipId: string): Alongside => ({
+  name: 'pledge',
+  sql: groundSql('$4', '$5'),
+  values: [lineId, membershipId],
+});
+
+/** What came with the actor by `pledgeAlongside`. */
+export const groundOf = (actor: BuyActor): PledgeGround | undefined => readGround(actor.alongside);
+
+/** Reads what a pledge depends on under the buy's lock; undefined when it isn't of this buy's club. */
 export async function readPledgeGround(
   buyId: string,
   { lineId, membershipId }: { lineId: string; membershipId: string },
-  tx?: Tx,
+  tx: Tx,
 ): Promise<PledgeGround | undefined> {
-  const values = [buyId, lineId, membershipId];
-  if (tx) return (await prepared<PledgeGround>(tx, 'pledge-ground', groundSql, values))[0];
-  const { rows } = await pool.query<PledgeGround>({
-    name: 'pledge-ground',
-    text: groundSql,
-    values,
-  });
-  return rows[0];
+  const [row] = await prepared<{ ground: unknown }>(
+    tx,
+    'pledge-ground',
+    `select ${groundSql('$2', '$3')} as ground from buys b join clubs c on c.id = b.club_id where b.id = $1`,
+    [buyId, lineId, membershipId],
+  );
+  return readGround(row?.ground);
 }
 
 /** The pledge as it was written, with the sheet's new version. */
