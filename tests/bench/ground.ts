@@ -77,7 +77,7 @@ async function end(child: ChildProcess): Promise<void> {
 
 /** Runs `work` on a ground of its own and takes everything down after it. */
 export async function withGround<T>(
-  size: { members: number; lines: number; small?: number },
+  size: { members: number; lines: number },
   work: (ground: Ground) => Promise<T>,
 ): Promise<T> {
   const adminUrl = process.env.TEST_DATABASE_URL;
@@ -93,7 +93,6 @@ export async function withGround<T>(
     LOG_LEVEL: 'warn',
     BENCH_MEMBERS: String(size.members),
     BENCH_LINES: String(size.lines),
-    BENCH_SMALL: String(size.small ?? 0),
   };
   const children: ChildProcess[] = [];
   try {
