@@ -144,7 +144,10 @@ async function changeAtOnce(
   where: Where,
   body: PledgeBody,
 ): Promise<PledgeReply | null> {
-  const decision = await decide(actor, where, body, groundOf(actor));
+  const ground = groundOf(actor);
+  // Jobs and seeds make their actors without it.
+  if (!ground) return null;
+  const decision = await decide(actor, where, body, ground);
   const { buy, salt, facts, now, verdict } = decision;
   if (verdict.act === 'keep') {
     return { sheetVersion: actor.buy.sheetVersion, pledge: now, proposed: false };
