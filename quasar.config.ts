@@ -1,12 +1,13 @@
 import { fileURLToPath } from 'node:url';
 import { defineConfig } from '#q-app/wrappers';
 import { inlineIcons } from './vite.icons.ts';
+import { websocketOnly } from './vite.websocket.ts';
 
 const ownStyles = fileURLToPath(new URL('./src/css/quasar/index.scss', import.meta.url));
 const api = { target: process.env.TAREWELL_DEV_API ?? 'http://127.0.0.1:4681' };
 
 export default defineConfig(() => ({
-  boot: ['theme', 'problems', 'session', 'live'],
+  boot: ['icons', 'theme', 'problems', 'session', 'live'],
   css: [
     '~@fontsource-variable/atkinson-hyperlegible-next/wght.css',
     '~@fontsource-variable/atkinson-hyperlegible-mono/wght.css',
@@ -14,7 +15,6 @@ export default defineConfig(() => ({
     'app.scss',
   ],
   framework: {
-    iconSet: 'svg-mdi-v7',
     autoImportComponentCase: 'pascal',
     plugins: ['Dark', 'Notify'],
   },
@@ -24,7 +24,7 @@ export default defineConfig(() => ({
     vueOptionsAPI: false,
     distDir: 'dist/spa',
     typescript: { strict: true, vueShim: false },
-    vitePlugins: [inlineIcons()],
+    vitePlugins: [inlineIcons(), websocketOnly()],
     // A worker in pieces, so that it too loads a part only when it needs it.
     extendViteConf: () => ({ worker: { format: 'es' as const } }),
     alias: { 'quasar/dist/quasar.sass': ownStyles },

@@ -1,5 +1,5 @@
 import type { ClientEvents, JoinAnswer, JoinBuy, ServerEvents } from '#shared/schemas/live.ts';
-import { io, type Socket } from 'socket.io-client';
+import type { Socket } from 'socket.io-client';
 
 type LiveSocket = Socket<ServerEvents, ClientEvents>;
 type Joined = (answer: JoinAnswer, again: boolean) => void;
@@ -7,8 +7,11 @@ type Room = JoinBuy & { holders: Set<Joined> };
 
 const ANSWER_MS = 5_000;
 const AGAIN_MS = 500;
+const RELOAD_MS = 5_000;
 
 let socket: LiveSocket | null = null;
+/** Counts who asked to connect or to close, so that a client that was late to load doesn't open what was closed. */
+let turn = 0;
 let whenRefused: () => void = () => {};
 const rooms = new Map<string, Room>();
 const attachers = new Set<(to: LiveSocket) => void>();
@@ -27,11 +30,25 @@ async function ask({ club, buy, holders }: Room, again: boolean) {
   if (answer) asked.forEach((joined) => joined(answer, again));
 }
 
+/** The socket's client comes after the page itself, and again after a while when it couldn't be had. */
+async function loadClient(asked: number) {
+  for (;;) {
+    const client = await import('./socketClient.ts').catch(() => null);
+    if (asked !== turn) return null;
+    if (client) return client;
+    tell(false);
+    await new Promise((resolve) => setTimeout(resolve, RELOAD_MS));
+  }
+}
+
 /** Opens the one socket of this page; called when somebody is signed in. */
-export function connectSocket() {
+export async function connectSocket() {
   if (socket) return;
+  turn += 1;
+  const client = await loadClient(turn);
+  if (!client) return;
   let before = false;
-  const opened: LiveSocket = io({ transports: ['websocket'], withCredentials: true });
+  const opened: LiveSocket = client.io({ transports: ['websocket'], withCredentials: true });
   socket = opened;
   opened.on('connect', () => {
     tell(true);
@@ -59,6 +76,7 @@ export const onSocketRefused = (handler: () => void) => {
 
 /** Closes it; called at sign-out. */
 export function disconnectSocket() {
+  turn += 1;
   socket?.disconnect();
   socket = null;
 }

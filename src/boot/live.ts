@@ -2,21 +2,14 @@ import { defineBoot } from '#q-app/wrappers';
 import { watch } from 'vue';
 import { connectSocket, disconnectSocket, onConnection, onLive } from 'src/api/socket.ts';
 import { useBuysStore } from 'src/stores/buys.ts';
-import { usePickupStore } from 'src/stores/pickup.ts';
 import { useSessionStore } from 'src/stores/session.ts';
-import { useSplitsStore } from 'src/stores/splits.ts';
 
 export default defineBoot(({ router }) => {
   const session = useSessionStore();
   const buys = useBuysStore();
-  const splits = useSplitsStore();
-  const pickup = usePickupStore();
 
+  // The stores of one step's pages listen by themselves once such a page has loaded them.
   onLive('buy:changed', (change) => buys.hear(change));
-  onLive('buy:changed', (change) => splits.hear(change));
-  onLive('split:changed', (change) => splits.receive(change));
-  onLive('buy:changed', (change) => pickup.hear(change));
-  onLive('split:changed', (change) => pickup.hear(change));
 
   /** A role or a membership may be another one since the connection was lost. */
   async function lookAgain() {
@@ -36,7 +29,7 @@ export default defineBoot(({ router }) => {
     (id) => {
       // The handshake carries the session, so another account needs another connection.
       disconnectSocket();
-      if (id) connectSocket();
+      if (id) void connectSocket();
     },
     { immediate: true },
   );

@@ -1,4 +1,3 @@
-import { TZDate } from '@date-fns/tz';
 import { computed, inject, provide, type ComputedRef, type InjectionKey } from 'vue';
 import { formatMass } from '#shared/domain/mass/formatMass.ts';
 import { formatMoney, minorToDecimal } from '#shared/domain/money/formatMoney.ts';
@@ -36,10 +35,9 @@ const makeFormat = (choices: FormatChoices) => {
     new Intl.DateTimeFormat(locale, { ...options, timeZone: zone });
   const dayParts = { weekday: 'short', day: 'numeric', month: 'short' } as const;
   const timeParts = { hour: '2-digit', minute: '2-digit' } as const;
+  const yearOf = new Intl.DateTimeFormat('en', { year: 'numeric', timeZone });
   const withYear = (at: Date) =>
-    new TZDate(at, timeZone).getFullYear() === new TZDate(Date.now(), timeZone).getFullYear()
-      ? {}
-      : ({ year: 'numeric' } as const);
+    yearOf.format(at) === yearOf.format() ? {} : ({ year: 'numeric' } as const);
   const read = (at: Instant) => new Date(at);
   const groupMark =
     new Intl.NumberFormat(locale).formatToParts(1234567).find(({ type }) => type === 'group')

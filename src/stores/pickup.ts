@@ -9,6 +9,7 @@ import { defineStore } from 'pinia';
 import { ref } from 'vue';
 import * as pickup from 'src/api/pickup.ts';
 import { putPaper } from 'src/api/sheet.ts';
+import { onLive } from 'src/api/socket.ts';
 import type { BuyAt } from 'src/api/splits.ts';
 
 const PAUSE_MS = 200;
@@ -60,6 +61,9 @@ export const usePickupStore = defineStore('pickup', () => {
       }, PAUSE_MS),
     );
   }
+
+  onLive('split:changed', hear);
+  onLive('buy:changed', hear);
 
   /** Keeps a buy's pickup fresh by `load` for as long as a page shows it; gives the function that stops it. */
   function follow(buy: string, load: () => Promise<unknown>): () => void {

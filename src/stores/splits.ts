@@ -10,7 +10,7 @@ import type {
 } from '#shared/schemas/splits.ts';
 import { defineStore } from 'pinia';
 import { ref } from 'vue';
-import { joinRoom } from 'src/api/socket.ts';
+import { joinRoom, onLive } from 'src/api/socket.ts';
 import * as splits from 'src/api/splits.ts';
 import type { BuyAt } from 'src/api/splits.ts';
 import { useBuysStore } from 'src/stores/buys.ts';
@@ -100,6 +100,9 @@ export const useSplitsStore = defineStore('splits', () => {
   function hear(change: { buyId: string; kind: string }) {
     if (change.kind === 'terms' || change.kind === 'state') reloadSoon(change.buyId);
   }
+
+  onLive('split:changed', receive);
+  onLive('buy:changed', hear);
 
   async function act(change: Promise<SplitChange>): Promise<SplitChange> {
     const made = await change;

@@ -2,6 +2,7 @@ import { existsSync, readFileSync, readdirSync } from 'node:fs';
 import path from 'node:path';
 import { preprocessCSS, resolveConfig } from 'vite';
 import { beforeAll, describe, expect, it } from 'vitest';
+import { icons } from 'src/boot/iconSet.ts';
 
 const project = path.join(import.meta.dirname, '..', '..', '..');
 const quasar = path.join(project, 'node_modules/quasar/src');
@@ -66,6 +67,22 @@ const otherwise = new Set([
   // Styled by itself only in a drawer.
   'q-item__section',
 ]);
+
+describe("the app's own set of icons", () => {
+  it('has every icon that the parts in use draw', () => {
+    const asked = [...modulesUsed()].flatMap((file) =>
+      [...read(file).matchAll(/\$q\.iconSet\.(?!set\b)([a-z]+)(?:\.([a-z]+))?/gi)].map(
+        ([, group = '', name]) => ({ group, name }),
+      ),
+    );
+    expect(asked.length).toBeGreaterThan(10);
+    const missing = asked.filter(({ group, name }) => {
+      const found = (icons as Record<string, unknown>)[group];
+      return typeof found !== 'object' || !found || (name !== undefined && !(name in found));
+    });
+    expect(missing).toEqual([]);
+  });
+});
 
 describe("the app's choice of Quasar's styles", () => {
   let parts: Set<string>;
