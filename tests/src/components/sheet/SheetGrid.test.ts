@@ -34,7 +34,8 @@ const cell = (row: number, column: number) => {
 const words = (row: number, column: number) =>
   cell(row, column).textContent?.replace(/\s+/g, ' ').trim();
 const press = (key: string) => fireEvent.keyDown(document.activeElement ?? document.body, { key });
-const field = () => screen.getByRole<HTMLInputElement>('textbox');
+/** The field of the cell that is edited; its part of the page comes with the first edit. */
+const field = () => screen.findByRole<HTMLInputElement>('textbox');
 
 function answerPledges() {
   vi.mocked(api.putPledge).mockImplementation((_to, lineId, membershipId, body) => {
@@ -90,10 +91,10 @@ describe('the sheet', () => {
     expect(document.activeElement).toBe(cell(1, 2));
     await press('ArrowUp');
     await press('7');
-    expect(field().value).toBe('7');
-    await fireEvent.update(field(), '1.2kg');
+    expect((await field()).value).toBe('7');
+    await fireEvent.update(await field(), '1.2kg');
     expect((await screen.findByRole('status')).textContent).toMatch(/1.200.g/);
-    await fireEvent.keyDown(field(), { key: 'Enter' });
+    await fireEvent.keyDown(await field(), { key: 'Enter' });
     expect(api.putPledge).toHaveBeenCalledExactlyOnceWith(place, ids.epsom, ids.me, {
       wantedMg: 1_200_000,
       upToMg: null,
@@ -103,13 +104,20 @@ describe('the sheet', () => {
     expect(document.activeElement).toBe(cell(0, 2));
   });
 
+  it('loses nothing typed while the field is on its way', async () => {
+    await show();
+    cell(0, 2).focus();
+    await Promise.all(['6', '5', '0'].map(press));
+    expect((await field()).value).toBe('650');
+  });
+
   it('leaves a cell as it was by Esc', async () => {
     await show();
     cell(0, 2).focus();
     await press('Enter');
-    expect(field().value).toBe('400');
-    await fireEvent.update(field(), '999');
-    await fireEvent.keyDown(field(), { key: 'Escape' });
+    expect((await field()).value).toBe('400');
+    await fireEvent.update(await field(), '999');
+    await fireEvent.keyDown(await field(), { key: 'Escape' });
     expect(screen.queryByRole('textbox')).toBeNull();
     expect(words(0, 2)).toBe('400');
     expect(api.putPledge).not.toHaveBeenCalled();
@@ -121,9 +129,9 @@ describe('the sheet', () => {
     await show();
     cell(0, 2).focus();
     await press('Enter');
-    await fireEvent.update(field(), '1,500');
-    await fireEvent.keyDown(field(), { key: 'Enter' });
-    expect(field().getAttribute('aria-invalid')).toBe('true');
+    await fireEvent.update(await field(), '1,500');
+    await fireEvent.keyDown(await field(), { key: 'Enter' });
+    expect((await field()).getAttribute('aria-invalid')).toBe('true');
     expect(api.putPledge).not.toHaveBeenCalled();
     await fireEvent.click(await screen.findByRole('button', { name: /1.500.g/ }));
     expect(vi.mocked(api.putPledge).mock.calls[0]?.[3].wantedMg).toBe(1_500_000);
@@ -138,8 +146,8 @@ describe('the sheet', () => {
     answerPledges();
     await show({}, { may: { ...mySheet().may, pledgeForOthers: true } });
     await fireEvent.click(cell(1, 2));
-    await fireEvent.update(field(), '450');
-    await fireEvent.keyDown(field(), { key: 'Enter' });
+    await fireEvent.update(await field(), '450');
+    await fireEvent.keyDown(await field(), { key: 'Enter' });
     expect(vi.mocked(api.putPledge).mock.calls[0]?.slice(1, 3)).toEqual([ids.epsom, ids.noor]);
   });
 
@@ -163,7 +171,7 @@ describe('the sheet', () => {
     await show();
     cell(0, 2).focus();
     await press('5');
-    await fireEvent.keyDown(field(), { key: 'Enter' });
+    await fireEvent.keyDown(await field(), { key: 'Enter' });
     await waitFor(() => expect(words(0, 2)).toBe('400 not kept'));
     expect(cell(0, 2).getAttribute('aria-description')).toBe('It locked a moment ago.');
   });
