@@ -97,7 +97,7 @@ describe('an empty installation', () => {
     await founder.page.getByRole('button', { name: 'Let Osric Penhale in' }).click();
     await told(founder.page, 'Osric Penhale is in the club');
     expect((await mailTo('osric@harrowfen.example'))?.subject).toBe(`You are in ${clubName}`);
-    await page.goto('/');
+    // The page that waits goes on by itself.
     await page.getByRole('heading', { level: 1, name: 'Buys' }).waitFor();
     await page.getByText('No buys yet').waitFor();
   });
