@@ -9,7 +9,7 @@ import { planWithin } from './plannerThread.ts';
 
 const budgetMs = 2_000;
 const gatherMs = 60;
-const mostRestMs = 500;
+const mostRestMs = 1_000;
 
 const rest = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
 
@@ -68,8 +68,8 @@ async function planAll(): Promise<void> {
     } catch (error) {
       logger.error({ err: error, buyId }, 'planning failed');
     }
-    // Half of the time is left to whoever pledges.
-    await rest(Math.min(performance.now() - began, mostRestMs));
+    // Three quarters of the time are left to whoever pledges.
+    await rest(Math.min(3 * (performance.now() - began), mostRestMs));
   }
 }
 
