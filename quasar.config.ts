@@ -25,8 +25,12 @@ export default defineConfig(() => ({
     distDir: 'dist/spa',
     typescript: { strict: true, vueShim: false },
     vitePlugins: [inlineIcons(), websocketOnly()],
-    // A worker in pieces, so that it too loads a part only when it needs it.
-    extendViteConf: () => ({ worker: { format: 'es' as const } }),
+    extendViteConf: () => ({
+      // In pieces, so that a worker too loads a part only when it needs it.
+      worker: { format: 'es' as const },
+      // Crumbs of a few lines go into a neighbour: fewer requests, and a shorter list of all files in the first.
+      build: { rollupOptions: { output: { experimentalMinChunkSize: 2_000 } } },
+    }),
     alias: { 'quasar/dist/quasar.sass': ownStyles },
   },
   devServer: {
