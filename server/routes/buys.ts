@@ -19,6 +19,7 @@ export const buysRoutes: RouteDef[] = [
     method: 'get',
     path: '/buys',
     summary: 'The buys of a club that the reader can see',
+    former: true,
     reply: BuyList,
     allow: canListBuys,
     run: ({ actor }) => listBuys(actor),

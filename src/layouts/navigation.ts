@@ -17,12 +17,13 @@ export type NavItem = {
   under: NavItem[];
 };
 
-type Place = { name: string; label: string; icon?: string; under?: Place[] };
+/** `former`: also for who left the club, where their own buys, books and notices stay theirs to read. */
+type Place = { name: string; label: string; icon?: string; former?: boolean; under?: Place[] };
 
 const places: Place[] = [
-  { name: 'buys', label: 'Buys', icon: mdiShoppingOutline },
-  { name: 'ledger', label: 'Ledger', icon: mdiBookOpenOutline },
-  { name: 'notices', label: 'Notices', icon: mdiBellOutline },
+  { name: 'buys', label: 'Buys', icon: mdiShoppingOutline, former: true },
+  { name: 'ledger', label: 'Ledger', icon: mdiBookOpenOutline, former: true },
+  { name: 'notices', label: 'Notices', icon: mdiBellOutline, former: true },
   {
     name: 'club',
     label: 'Club',
@@ -45,8 +46,8 @@ export function useNavigation() {
   const route = useRoute();
   const session = useSessionStore();
 
-  function open(place: Place, club: string): NavItem[] {
-    const under = (place.under ?? []).flatMap((child) => open(child, club));
+  function item(place: Place, club: string): NavItem[] {
+    const under = (place.under ?? []).flatMap((child) => item(child, club));
     const target = under[0]?.to.name ?? place.name;
     const record = router.getRoutes().find(({ name }) => name === target);
     const roles = record?.meta.roles;
@@ -57,8 +58,10 @@ export function useNavigation() {
   }
 
   const items = computed(() => {
-    const club = session.currentClub?.clubSlug;
-    return club ? places.flatMap((place) => open(place, club)) : [];
+    const club = session.currentClub;
+    if (!club) return [];
+    const open = places.filter(({ former }) => former || club.status === 'active');
+    return open.flatMap((place) => item(place, club.clubSlug));
   });
   const tabs = computed(() => items.value.find((item) => item.lit)?.under ?? []);
 

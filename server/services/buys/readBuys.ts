@@ -11,9 +11,10 @@ import { owedOfBuy } from '../ledger/owed.ts';
 import { notFound } from '../problem.ts';
 import { findBuyFacts } from './findBuyFacts.ts';
 
-/** The buys of a club that this member can see, newest first. */
+/** The buys of a club that this member can see, newest first; those who left see the ones they are part of. */
 export async function listBuys(actor: ClubActor): Promise<BuyList> {
-  const rows = await findBuyFacts(actor.club.id, actor.membershipId);
+  const all = await findBuyFacts(actor.club.id, actor.membershipId);
+  const rows = actor.status === 'active' ? all : all.filter((row) => row.mine_mg > 0);
   const money = await moneyOf(rows, actor.membershipId);
   return {
     buys: rows.map((row) => presentBuySummary(row, money.get(row.id) ?? noMoney, actor)),
