@@ -1,0 +1,30 @@
+import { onMounted, onScopeDispose, ref, type ShallowRef } from 'vue';
+
+const ROUNDING_PX = 1;
+
+/** How many pixels lie out of sight to the left (`before`) and right (`after`) of a box that scrolls sideways. */
+export function useScrollEdges(box: Readonly<ShallowRef<HTMLElement | null>>) {
+  const before = ref(0);
+  const after = ref(0);
+  const whole = (px: number) => (px > ROUNDING_PX ? px : 0);
+
+  function look() {
+    const now = box.value;
+    if (!now) return;
+    before.value = whole(now.scrollLeft);
+    after.value = whole(now.scrollWidth - now.clientWidth - now.scrollLeft);
+  }
+
+  let observer: ResizeObserver | undefined;
+  onMounted(() => {
+    if (!box.value || typeof ResizeObserver === 'undefined') return;
+    box.value.addEventListener('scroll', look, { passive: true });
+    // The box changes with the window, its rows with the columns.
+    observer = new ResizeObserver(look);
+    observer.observe(box.value);
+    for (const row of box.value.children) observer.observe(row);
+  });
+  onScopeDispose(() => observer?.disconnect());
+
+  return { before, after };
+}
