@@ -26,5 +26,16 @@ export function useScrollEdges(box: Readonly<ShallowRef<HTMLElement | null>>) {
   });
   onScopeDispose(() => observer?.disconnect());
 
-  return { before, after };
+  /** Scrolls sideways until a part stands clear of the columns of these widths that stick to both ends. */
+  function reveal(part: HTMLElement, stuck: { left: number; right: number }) {
+    if (!box.value) return;
+    const room = box.value.getBoundingClientRect();
+    const { left, right } = part.getBoundingClientRect();
+    const over = right - (room.right - stuck.right);
+    const under = room.left + stuck.left - left;
+    if (over > 0) box.value.scrollLeft += over;
+    else if (under > 0) box.value.scrollLeft -= under;
+  }
+
+  return { before, after, reveal };
 }
