@@ -2,7 +2,7 @@ import { onMounted, onScopeDispose, ref, type ShallowRef } from 'vue';
 
 const ROUNDING_PX = 1;
 
-/** How many pixels lie out of sight to the left (`before`) and right (`after`) of a box that scrolls sideways. */
+/** How many pixels lie out of sight to the left (`before`) and right (`after`) of a grid that scrolls sideways. */
 export function useScrollEdges(box: Readonly<ShallowRef<HTMLElement | null>>) {
   const before = ref(0);
   const after = ref(0);
@@ -22,7 +22,8 @@ export function useScrollEdges(box: Readonly<ShallowRef<HTMLElement | null>>) {
     // The box changes with the window, its rows with the columns.
     observer = new ResizeObserver(look);
     observer.observe(box.value);
-    for (const row of box.value.children) observer.observe(row);
+    const row = box.value.querySelector('[role="row"]');
+    if (row) observer.observe(row);
   });
   onScopeDispose(() => observer?.disconnect());
 
