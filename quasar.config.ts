@@ -28,8 +28,12 @@ export default defineConfig(() => ({
     extendViteConf: () => ({
       // In pieces, so that a worker too loads a part only when it needs it.
       worker: { format: 'es' as const },
-      // Crumbs of a few lines go into a neighbour: fewer requests, and a shorter list of all files in the first.
-      build: { rollupOptions: { output: { experimentalMinChunkSize: 2_000 } } },
+      // The first file lists all others: crumbs of a few lines go into a neighbour, and names are short.
+      build: {
+        rollupOptions: {
+          output: { experimentalMinChunkSize: 2_000, chunkFileNames: 'assets/[hash].js' },
+        },
+      },
     }),
     alias: { 'quasar/dist/quasar.sass': ownStyles },
   },
